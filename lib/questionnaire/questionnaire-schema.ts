@@ -10,9 +10,15 @@ import {
   sizeKinds,
 } from "./answer-sets";
 
-const positive = (what: string) => z.number().gt(0, `${what} must be greater than 0.`);
+const wording = (what: string, kind: string) => ({
+  error: (issue: { input?: unknown }) =>
+    issue.input === undefined || issue.input === null ? `${what}: give a number.` : `${what} must be a ${kind}, such as 400000 or 1e6.`,
+});
+const finite = (what: string) => z.number(wording(what, "number"));
+const whole = (what: string) => z.int(wording(what, "whole number"));
+const positive = (what: string) => finite(what).gt(0, `${what} must be greater than 0.`);
 const wholeFromOne = (what: string, max: number) =>
-  z.int(`${what} must be a whole number.`).min(1, `${what} must be at least 1.`).max(max, `${what} can be at most ${max}.`);
+  whole(what).min(1, `${what} must be at least 1.`).max(max, `${what} can be at most ${max}.`);
 
 const sizeSchema = z.strictObject({
   by: z.enum(sizeKinds),
@@ -20,13 +26,13 @@ const sizeSchema = z.strictObject({
 });
 
 const importedSchema = z.strictObject({
-  cells: z.int("The number of cells must be whole.").min(0).max(1e10),
-  faces: z.int("The number of faces must be whole.").min(0).max(1e11),
-  boundaryFaces: z.int("The number of boundary faces must be whole.").min(0).max(1e11),
+  cells: whole("The number of cells").min(0, "Counts can't be negative.").max(1e10),
+  faces: whole("The number of faces").min(0, "Counts can't be negative.").max(1e11),
+  boundaryFaces: whole("The number of boundary faces").min(0, "Counts can't be negative.").max(1e11),
 });
 
 const contrastSchema = z.strictObject({
-  ratio: z.number().min(1, "Contrast is the largest over the smallest coefficient: at least 1.").max(1e12, "Contrast can be at most 1e12."),
+  ratio: finite("The contrast").min(1, "Contrast is the largest over the smallest coefficient: at least 1.").max(1e12, "Contrast can be at most 1e12."),
   pattern: z.enum(contrastPatterns),
 });
 
@@ -45,18 +51,18 @@ const hardwareSchema = z.strictObject({
 const questionnaireShape = z.strictObject({
   title: z.string().trim().max(120, "A title has at most 120 characters.").default(""),
   discretisation: z.enum(discretisations),
-  degree: z.int("The degree must be a whole number.").min(1, "The lowest degree is 1.").max(6, "Degrees above 6 are not covered."),
+  degree: whole("The degree").min(1, "The lowest degree is 1.").max(6, "Degrees above 6 are not covered."),
   meshFamily: z.enum(meshFamilies),
   size: sizeSchema.optional(),
   imported: importedSchema.optional(),
   domainVolume: positive("The domain's volume").max(1e30).default(1),
   coefficientScale: positive("The coefficient's scale").max(1e30).default(1),
-  anisotropy: z.number().min(1, "Anisotropy is the largest over the smallest direction: at least 1.").max(1e8).default(1),
-  aspectRatio: z.number().min(1, "The aspect ratio is longest over shortest: at least 1.").max(1e5).default(1),
+  anisotropy: finite("Anisotropy").min(1, "Anisotropy is the largest over the smallest direction: at least 1.").max(1e8).default(1),
+  aspectRatio: finite("The aspect ratio").min(1, "The aspect ratio is longest over shortest: at least 1.").max(1e5).default(1),
   contrast: contrastSchema,
   boundary: z.enum(boundaries),
   hardware: hardwareSchema,
-  tolerance: z.number().min(1e-14, "The tolerance is at least 1e-14.").max(1e-2, "The tolerance is at most 1e-2."),
+  tolerance: finite("The tolerance").min(1e-14, "The tolerance is at least 1e-14.").max(1e-2, "The tolerance is at most 1e-2."),
   repeatedSolves: wholeFromOne("Repeated solves", 10_000_000).default(1),
   priority: z.enum(priorities).default("time"),
   available: z.array(z.enum(capabilities)).max(capabilities.length).default([]),
