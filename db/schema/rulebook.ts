@@ -1,7 +1,8 @@
-import { integer, index, jsonb, pgTable, text, timestamp, unique, uuid } from "drizzle-orm/pg-core";
+import { sql } from "drizzle-orm";
+import { integer, index, jsonb, pgPolicy, pgTable, text, timestamp, unique, uuid } from "drizzle-orm/pg-core";
 import type { RuleSet } from "@/rules/rule-schema";
 import { organization, user } from "./auth";
-import { teamPolicy } from "./roles";
+import { authRole, currentTeam, teamPolicy } from "./roles";
 
 /** A numbered, immutable set of rules; the highest number is the live one. */
 export const edition = pgTable(
@@ -21,6 +22,11 @@ export const edition = pgTable(
   (table) => [unique("edition_team_number").on(table.teamId, table.number), teamPolicy("edition")],
 );
 
+/** Changes of membership happen as better-auth's role, and their audit row belongs to the same transaction: it may add one, not read any. */
+function membershipAudit() {
+  return pgPolicy("audit_membership", { as: "permissive", for: "insert", to: authRole, withCheck: sql`team_id = ${currentTeam}` });
+}
+
 /** Who changed what, when; append-only. */
 export const audit = pgTable(
   "audit",
@@ -34,5 +40,5 @@ export const audit = pgTable(
     detail: jsonb("detail").$type<Record<string, unknown>>().notNull().default({}),
     at: timestamp("at", { withTimezone: true }).notNull().defaultNow(),
   },
-  (table) => [index("audit_team_at").on(table.teamId, table.at, table.id), teamPolicy("audit")],
+  (table) => [index("audit_team_at").on(table.teamId, table.at, table.id), teamPolicy("audit"), membershipAudit()],
 );
