@@ -1,0 +1,133 @@
+"use client";
+
+import { Accordion as AccordionPrimitive } from "radix-ui";
+import { ChevronDown } from "lucide-react";
+import type { ReactNode } from "react";
+import { labelledTicks, makeLogScale, type LogScale } from "@/components/charts/log-scale";
+import { strategyColours } from "@/components/charts/strategy-identity";
+import { StrategyLabel } from "@/components/charts/strategy-label";
+import { Quantity, QuantityRange } from "@/components/ui/quantity";
+import type { RankingEntry } from "@/lib/advice/advice";
+import { formatRatio } from "@/lib/shared/format";
+import { MemoryNeed } from "./memory-need";
+
+type RankingListProps = {
+  entries: readonly RankingEntry[];
+  memoryAvailableGiB: number;
+  /** Measured total time over the first's predicted score, by strategy, drawn on the same axis. */
+  measured: Readonly<Record<string, number>>;
+  detail: (entry: RankingEntry) => ReactNode;
+};
+
+const columns = "lg:grid-cols-[1.5rem_minmax(11rem,15rem)_minmax(9rem,1fr)_4.5rem_9rem_6rem_1rem]";
+
+/** The ranked strategies as bars with their 80 % ranges on one log axis of relative time; each unfolds. */
+export function RankingList({ entries, memoryAvailableGiB, measured, detail }: RankingListProps) {
+  const scale = makeLogScale([1, ...entries.flatMap((entry) => (entry.relativeRange ? [entry.relativeRange.low, entry.relativeRange.high] : [])), ...Object.values(measured)]);
+  return (
+    <div className="grid gap-1">
+      <div aria-hidden className={`hidden items-end gap-x-4 border-b border-contour pb-1 text-xs text-faint lg:grid ${columns}`}>
+        <span />
+        <span>Strategy</span>
+        <Axis scale={scale} />
+        <span className="text-right">Time</span>
+        <span className="text-right">Memory</span>
+        <span className="text-right">Iterations</span>
+        <span />
+      </div>
+      <AccordionPrimitive.Root type="multiple" className="grid" defaultValue={entries[0] ? [entries[0].strategy] : []}>
+        {entries.map((entry) => (
+          <AccordionPrimitive.Item key={entry.strategy} value={entry.strategy} className="border-b border-hairline" data-strategy={entry.strategy}>
+            <AccordionPrimitive.Header asChild>
+              <h3 className="font-sans text-base font-normal">
+                <AccordionPrimitive.Trigger className={`group grid w-full grid-cols-[1.5rem_minmax(0,1fr)_auto_1rem] items-center gap-x-4 gap-y-1 py-2.5 text-left text-sm hover:bg-wash ${columns}`}>
+                  <Row entry={entry} scale={scale} memoryAvailableGiB={memoryAvailableGiB} measured={measured[entry.strategy] ?? null} />
+                </AccordionPrimitive.Trigger>
+              </h3>
+            </AccordionPrimitive.Header>
+            <AccordionPrimitive.Content className="pt-2 pb-6 lg:pl-10">{detail(entry)}</AccordionPrimitive.Content>
+          </AccordionPrimitive.Item>
+        ))}
+      </AccordionPrimitive.Root>
+    </div>
+  );
+}
+
+type RowProps = { entry: RankingEntry; scale: LogScale; memoryAvailableGiB: number; measured: number | null };
+
+function Row({ entry, scale, memoryAvailableGiB, measured }: RowProps) {
+  const { estimate } = entry;
+  return (
+    <>
+      <span className="figures text-right text-faint">{entry.rank}</span>
+      <StrategyLabel strategy={entry.strategy} className={entry.rank === 1 ? "font-semibold" : ""} />
+      <span className="order-last col-span-4 lg:order-none lg:col-span-1">
+        <Track entry={entry} scale={scale} measured={measured} />
+      </span>
+      <span className={`figures text-right ${entry.rank === 1 ? "font-semibold text-peg" : ""}`}>
+        <span className="sr-only">relative time </span>
+        {formatRatio(entry.relativeTime)}
+      </span>
+      <span className="order-last col-span-4 flex justify-between gap-3 text-xs text-faint lg:order-none lg:col-span-1 lg:block lg:text-right lg:text-sm lg:text-ink">
+        <MemoryNeed memory={estimate.memoryGiB} availableGiB={memoryAvailableGiB} />
+        <span className="lg:hidden">
+          <Iterations entry={entry} />
+        </span>
+      </span>
+      <span className="hidden text-right lg:block">
+        <Iterations entry={entry} />
+      </span>
+      <ChevronDown aria-hidden className="size-4 text-faint transition-transform group-data-[state=open]:rotate-180 print:hidden" />
+    </>
+  );
+}
+
+function Iterations({ entry }: { entry: RankingEntry }) {
+  const { iterations } = entry.estimate;
+  if (iterations.high <= 1) return <span title="A factorisation does not iterate">none</span>;
+  return (
+    <>
+      <Quantity value={Math.round(iterations.median)} unit="count" />
+      <span className="lg:hidden"> iterations</span>
+      <span className="hidden text-xs text-faint lg:block">
+        <QuantityRange low={Math.round(iterations.low)} high={Math.round(iterations.high)} unit="count" />
+      </span>
+    </>
+  );
+}
+
+function Track({ entry, scale, measured }: { entry: RankingEntry; scale: LogScale; measured: number | null }) {
+  const range = entry.relativeRange;
+  if (range === null || entry.relativeTime === null) return null;
+  const left = scale.position(range.low);
+  const right = scale.position(range.high);
+  const words = `${formatRatio(range.low)} to ${formatRatio(range.high)} of the first${measured === null ? "" : `, measured ${formatRatio(measured)}`}`;
+  return (
+    <span className="relative block h-5" role="img" aria-label={words} title={words}>
+      {scale.ticks.filter((tick) => tick.step === 1).map((tick) => (
+        <span key={tick.value} className="absolute inset-y-0 w-px bg-hairline" style={{ left: `${scale.position(tick.value)}%` }} />
+      ))}
+      <span className="absolute inset-y-0 w-px bg-contour" style={{ left: `${scale.position(1)}%` }} />
+      <span
+        className="absolute top-1.5 h-2 min-w-1 rounded-full opacity-45"
+        style={{ left: `${left}%`, width: `${right - left}%`, background: strategyColours[entry.strategy] }}
+      />
+      <span className="absolute top-0.5 h-4 w-1 -translate-x-1/2 rounded-full" style={{ left: `${scale.position(entry.relativeTime)}%`, background: strategyColours[entry.strategy] }} />
+      {measured !== null && (
+        <span className="absolute -top-1 size-0 -translate-x-1/2 border-x-[5px] border-t-8 border-x-transparent border-t-peg" style={{ left: `${scale.position(measured)}%` }} />
+      )}
+    </span>
+  );
+}
+
+function Axis({ scale }: { scale: LogScale }) {
+  return (
+    <span className="relative block h-5">
+      {labelledTicks(scale).map(({ tick }) => (
+        <span key={tick.value} className="figures absolute bottom-0 -translate-x-1/2" style={{ left: `${scale.position(tick.value)}%` }}>
+          {formatRatio(tick.value).replace(".0x", "x")}
+        </span>
+      ))}
+    </span>
+  );
+}
