@@ -3,7 +3,8 @@
 import { Accordion as AccordionPrimitive } from "radix-ui";
 import { ChevronDown } from "lucide-react";
 import type { ReactNode } from "react";
-import { labelledTicks, makeLogScale, type LogScale } from "@/components/charts/log-scale";
+import { makeLogScale, type LogScale } from "@/components/charts/log-scale";
+import { RatioTrack, TrackAxis } from "@/components/charts/ratio-track";
 import { strategyColours } from "@/components/charts/strategy-identity";
 import { StrategyLabel } from "@/components/charts/strategy-label";
 import { Quantity, QuantityRange } from "@/components/ui/quantity";
@@ -29,7 +30,7 @@ export function RankingList({ entries, memoryAvailableGiB, measured, detail }: R
       <div aria-hidden className={`hidden items-end gap-x-4 border-b border-contour pb-1 text-xs text-faint lg:grid ${columns}`}>
         <span />
         <span>Strategy</span>
-        <Axis scale={scale} />
+        <TrackAxis scale={scale} format={tickText} />
         <span className="text-right">Time</span>
         <span className="text-right">Memory</span>
         <span className="text-right">Iterations</span>
@@ -99,35 +100,11 @@ function Iterations({ entry }: { entry: RankingEntry }) {
 function Track({ entry, scale, measured }: { entry: RankingEntry; scale: LogScale; measured: number | null }) {
   const range = entry.relativeRange;
   if (range === null || entry.relativeTime === null) return null;
-  const left = scale.position(range.low);
-  const right = scale.position(range.high);
   const words = `${formatRatio(range.low)} to ${formatRatio(range.high)} of the first${measured === null ? "" : `, measured ${formatRatio(measured)}`}`;
-  return (
-    <span className="relative block h-5" role="img" aria-label={words} title={words}>
-      {scale.ticks.filter((tick) => tick.step === 1).map((tick) => (
-        <span key={tick.value} className="absolute inset-y-0 w-px bg-hairline" style={{ left: `${scale.position(tick.value)}%` }} />
-      ))}
-      <span className="absolute inset-y-0 w-px bg-contour" style={{ left: `${scale.position(1)}%` }} />
-      <span
-        className="absolute top-1.5 h-2 min-w-1 rounded-full opacity-45"
-        style={{ left: `${left}%`, width: `${right - left}%`, background: strategyColours[entry.strategy] }}
-      />
-      <span className="absolute top-0.5 h-4 w-1 -translate-x-1/2 rounded-full" style={{ left: `${scale.position(entry.relativeTime)}%`, background: strategyColours[entry.strategy] }} />
-      {measured !== null && (
-        <span className="absolute -top-1 size-0 -translate-x-1/2 border-x-[5px] border-t-8 border-x-transparent border-t-peg" style={{ left: `${scale.position(measured)}%` }} />
-      )}
-    </span>
-  );
+  return <RatioTrack scale={scale} low={range.low} median={entry.relativeTime} high={range.high} measured={measured} colour={strategyColours[entry.strategy]} words={words} reference={1} />;
 }
 
-function Axis({ scale }: { scale: LogScale }) {
-  return (
-    <span className="relative block h-5">
-      {labelledTicks(scale).map(({ tick }) => (
-        <span key={tick.value} className="figures absolute bottom-0 -translate-x-1/2" style={{ left: `${scale.position(tick.value)}%` }}>
-          {formatRatio(tick.value).replace(".0x", "x")}
-        </span>
-      ))}
-    </span>
-  );
+/** 1x, 20x: an axis needs no decimals that are zero. */
+function tickText(value: number): string {
+  return formatRatio(value).replace(".0x", "x");
 }

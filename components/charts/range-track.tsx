@@ -1,46 +1,46 @@
-import { labelledTicks, type LogScale } from "./log-scale";
+import { cn } from "@/components/ui/cn";
+import { formatQuantity, formatRange, type QuantityUnit } from "@/lib/shared/format";
+import type { LogScale } from "./log-scale";
+import { strategyColours, type StrategyMarkId } from "./strategy-identity";
+import { StrategyMark } from "./strategy-mark";
+
+export type RangeValues = { low: number; median: number; high: number };
 
 type RangeTrackProps = {
   scale: LogScale;
-  low: number;
-  median: number;
-  high: number;
-  /** A measured value on the same axis, drawn as a peg. */
-  measured?: number | null;
-  /** CSS colour of the bar. */
-  colour: string;
-  /** The whole in words, for screen readers and on hover. */
-  words: string;
-  /** A value to mark with a stronger line, such as 1 on an axis of ratios. */
-  reference?: number;
+  unit: QuantityUnit;
+  /** Names the row, for screen readers. */
+  label: string;
+  mark: StrategyMarkId;
+  range: RangeValues | null;
+  measured: readonly number[];
+  muted: boolean;
+  reference: number | null;
 };
 
-/** One range on a shared log axis: the 80 % range as a bar, its median as a stroke, a measured value as a peg. */
-export function RangeTrack({ scale, low, median, high, measured = null, colour, words, reference }: RangeTrackProps) {
-  const left = scale.position(low);
+/** One row's range on the shared axis: the 80 % range as a bar, the median as the strategy's mark, measured values as pegs. */
+export function RangeTrack({ scale, unit, label, mark, range, measured, muted, reference }: RangeTrackProps) {
+  const words = range === null ? `${label}: no estimate` : `${label}: ${formatQuantity(range.median, unit)}, ${formatRange(range.low, range.high, unit)}`;
+  const pegs = measured.length === 0 ? "" : `; measured ${measured.map((value) => formatQuantity(value, unit)).join(", ")}`;
   return (
-    <span className="relative block h-5" role="img" aria-label={words} title={words}>
+    <span role="img" aria-label={words + pegs} className="relative block h-6" style={{ color: strategyColours[mark] }}>
       {scale.ticks.filter((tick) => tick.step === 1).map((tick) => (
         <span key={tick.value} className="absolute inset-y-0 w-px bg-hairline" style={{ left: `${scale.position(tick.value)}%` }} />
       ))}
-      {reference !== undefined && <span className="absolute inset-y-0 w-px bg-contour" style={{ left: `${scale.position(reference)}%` }} />}
-      <span className="absolute top-1.5 h-2 min-w-1 rounded-full opacity-45" style={{ left: `${left}%`, width: `${scale.position(high) - left}%`, background: colour }} />
-      <span className="absolute top-0.5 h-4 w-1 -translate-x-1/2 rounded-full" style={{ left: `${scale.position(median)}%`, background: colour }} />
-      {measured !== null && (
-        <span className="absolute -top-1 size-0 -translate-x-1/2 border-x-[5px] border-t-8 border-x-transparent border-t-peg" style={{ left: `${scale.position(measured)}%` }} />
+      {reference !== null && <span className="absolute inset-y-0 border-l border-dashed border-bad" style={{ left: `${scale.position(reference)}%` }} />}
+      {range !== null && (
+        <>
+          <span
+            className={cn("absolute top-2 h-2 min-w-1 rounded-full", muted ? "border border-dashed border-current" : "bg-current opacity-40")}
+            style={{ left: `${scale.position(range.low)}%`, width: `${scale.position(range.high) - scale.position(range.low)}%` }}
+          />
+          <span className="absolute top-1/2 grid -translate-x-1/2 -translate-y-1/2" style={{ left: `${scale.position(range.median)}%` }}>
+            <StrategyMark id={mark} hollow={muted} />
+          </span>
+        </>
       )}
-    </span>
-  );
-}
-
-/** The ticks above a column of tracks. */
-export function TrackAxis({ scale, format }: { scale: LogScale; format: (value: number) => string }) {
-  return (
-    <span aria-hidden className="relative block h-5 text-xs text-faint">
-      {labelledTicks(scale).map(({ tick, narrow }) => (
-        <span key={tick.value} className={`figures absolute bottom-0 -translate-x-1/2 whitespace-nowrap ${narrow ? "" : "max-sm:hidden"}`} style={{ left: `${scale.position(tick.value)}%` }}>
-          {format(tick.value)}
-        </span>
+      {measured.map((value, index) => (
+        <span key={index} className="absolute -top-0.5 size-0 -translate-x-1/2 border-x-[5px] border-t-8 border-x-transparent border-t-peg" style={{ left: `${scale.position(value)}%` }} />
       ))}
     </span>
   );
