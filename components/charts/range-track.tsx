@@ -1,8 +1,9 @@
-import { cn } from "@/components/ui/cn";
+import type { ReactNode } from "react";
 import { formatQuantity, formatRange, type QuantityUnit } from "@/lib/shared/format";
+import { LogGrid, percent } from "./log-axis";
 import type { LogScale } from "./log-scale";
 import { strategyColours, type StrategyMarkId } from "./strategy-identity";
-import { StrategyMark } from "./strategy-mark";
+import { StrategyShape } from "./strategy-mark";
 
 export type RangeValues = { low: number; median: number; high: number };
 
@@ -12,36 +13,69 @@ type RangeTrackProps = {
   /** Names the row, for screen readers. */
   label: string;
   mark: StrategyMarkId;
+  /** Null where there is no estimate. */
   range: RangeValues | null;
-  measured: readonly number[];
-  muted: boolean;
-  reference: number | null;
+  /** Measured values, drawn as pegs above the range. */
+  measured?: readonly number[];
+  muted?: boolean;
+  /** A line across all rows, such as a limit. */
+  reference?: number | null;
 };
 
 /** One row's range on the shared axis: the 80 % range as a bar, the median as the strategy's mark, measured values as pegs. */
-export function RangeTrack({ scale, unit, label, mark, range, measured, muted, reference }: RangeTrackProps) {
-  const words = range === null ? `${label}: no estimate` : `${label}: ${formatQuantity(range.median, unit)}, ${formatRange(range.low, range.high, unit)}`;
-  const pegs = measured.length === 0 ? "" : `; measured ${measured.map((value) => formatQuantity(value, unit)).join(", ")}`;
+export function RangeTrack({ scale, unit, label, mark, range, measured = [], muted = false, reference = null }: RangeTrackProps) {
   return (
-    <span role="img" aria-label={words + pegs} className="relative block h-6" style={{ color: strategyColours[mark] }}>
-      {scale.ticks.filter((tick) => tick.step === 1).map((tick) => (
-        <span key={tick.value} className="absolute inset-y-0 w-px bg-hairline" style={{ left: `${scale.position(tick.value)}%` }} />
-      ))}
-      {reference !== null && <span className="absolute inset-y-0 border-l border-dashed border-bad" style={{ left: `${scale.position(reference)}%` }} />}
+    <svg role="img" aria-label={rangeSentence(label, unit, range, measured)} className="block h-8 w-full overflow-visible">
+      <LogGrid scale={scale} />
+      {reference !== null && <line x1={percent(scale.position(reference))} x2={percent(scale.position(reference))} y1="0%" y2="100%" className="stroke-bad" strokeWidth="1.5" strokeDasharray="5 3" />}
       {range !== null && (
-        <>
-          <span
-            className={cn("absolute top-2 h-2 min-w-1 rounded-full", muted ? "border border-dashed border-current" : "bg-current opacity-40")}
-            style={{ left: `${scale.position(range.low)}%`, width: `${scale.position(range.high) - scale.position(range.low)}%` }}
-          />
-          <span className="absolute top-1/2 grid -translate-x-1/2 -translate-y-1/2" style={{ left: `${scale.position(range.median)}%` }}>
-            <StrategyMark id={mark} hollow={muted} />
-          </span>
-        </>
+        <RangeBar scale={scale} range={range} colour={muted ? "var(--faint)" : strategyColours[mark]} hollow={muted}>
+          <StrategyShape id={mark} hollow={muted} rim />
+        </RangeBar>
       )}
       {measured.map((value, index) => (
-        <span key={index} className="absolute -top-0.5 size-0 -translate-x-1/2 border-x-[5px] border-t-8 border-x-transparent border-t-peg" style={{ left: `${scale.position(value)}%` }} />
+        <MeasuredPeg key={index} scale={scale} value={value} />
       ))}
-    </span>
+    </svg>
   );
+}
+
+type RangeBarProps = { scale: LogScale; range: RangeValues; colour: string; hollow?: boolean; /** The sign at the median, centred at its origin. */ children: ReactNode };
+
+/** The bar itself inside a drawing 32 px high. */
+export function RangeBar({ scale, range, colour, hollow = false, children }: RangeBarProps) {
+  const [low, high] = [scale.position(range.low), scale.position(range.high)];
+  return (
+    <g style={{ color: colour }}>
+      <rect
+        x={percent(low)}
+        width={percent(Math.max(high - low, 0.4))}
+        y="12"
+        height="8"
+        fill="currentColor"
+        fillOpacity={hollow ? 0 : 0.22}
+        stroke="currentColor"
+        strokeDasharray={hollow ? "3 2" : undefined}
+      />
+      <svg x={percent(scale.position(range.median))} y="16" className="overflow-visible">
+        {children}
+      </svg>
+    </g>
+  );
+}
+
+/** A measured value: a peg whose tip stands on the bar. */
+export function MeasuredPeg({ scale, value }: { scale: LogScale; value: number }) {
+  return (
+    <svg x={percent(scale.position(value))} y="16" className="overflow-visible">
+      <path d="M0-2.5L-5-14H5Z" className="fill-ink stroke-sheet" strokeWidth="1.2" strokeLinejoin="round" />
+    </svg>
+  );
+}
+
+/** The row in words, for those who do not see it drawn. */
+export function rangeSentence(label: string, unit: QuantityUnit, range: RangeValues | null, measured: readonly number[]): string {
+  const predicted = range === null ? "no estimate" : `${formatQuantity(range.median, unit)}, 80 % range ${formatRange(range.low, range.high, unit)}`;
+  const found = measured.length === 0 ? "" : `; measured ${measured.map((value) => formatQuantity(value, unit)).join(", ")}`;
+  return `${label}: ${predicted}${found}`;
 }

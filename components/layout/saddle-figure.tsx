@@ -30,7 +30,7 @@ function LevelLabel({ level }: { level: number }) {
   const reach = 200 * Math.sqrt(Math.abs(level));
   const [x, y] = level > 0 ? [200 + reach, 200] : [200, 200 + reach];
   return (
-    <text x={x} y={y} textAnchor="middle" dominantBaseline="central" className="fill-ink stroke-sheet text-xs" strokeWidth="5" paintOrder="stroke" transform={level > 0 ? `rotate(-90 ${x} ${y})` : undefined}>
+    <text x={x} y={y} textAnchor="middle" dominantBaseline="central" fontSize="19" className="fill-ink stroke-sheet" strokeWidth="7" paintOrder="stroke" transform={level > 0 ? `rotate(-90 ${x} ${y})` : undefined}>
       {String(level).replace("-", "−")}
     </text>
   );
