@@ -1,0 +1,89 @@
+import type { Outcome } from "@/lib/runs/run";
+
+/** Why a program ended otherwise than by a linear solve's own verdict. `outcome` null: the cause is left open. */
+export type Failure = { outcome: Outcome | null; line: number; reason: string; text: string };
+
+type Sign = { pattern: RegExp; outcome: Outcome | null; reason: string; text: string };
+
+/** Schedulers, the kernel and MPI; the first sign counts. Common practice, no source. */
+const signs: readonly Sign[] = [
+  { pattern: /\bDUE TO TIME LIMIT\b|\bexceeded (?:its )?(?:wall ?time|time) limit\b|=>> PBS: job killed: walltime|TERM_RUNLIMIT/i, outcome: "over-time", reason: "TIME_LIMIT", text: "The batch system ended the job at its time limit." },
+  { pattern: /\boom[-_ ]kill|\bOut Of Memory\b.*\bkill|\bOUT_OF_MEMORY\b|\bExceeded job memory limit\b|TERM_MEMLIMIT/i, outcome: "out-of-memory", reason: "MEMORY_LIMIT", text: "The batch system or the kernel ended the job for want of memory." },
+  { pattern: /\bstd::bad_alloc\b|\bCannot allocate memory\b/i, outcome: "out-of-memory", reason: "ALLOCATION_FAILED", text: "An allocation failed." },
+];
+
+const kinds: Record<string, { outcome: Outcome | null; text: string }> = {
+  "Out of memory": { outcome: "out-of-memory", text: "PETSc could not allocate memory." },
+  "Zero pivot in LU factorization": { outcome: "broken", text: "A zero pivot stopped the factorisation." },
+  "Zero pivot in Cholesky factorization": { outcome: "broken", text: "A zero pivot stopped the factorisation." },
+  "Error in external library": { outcome: "broken", text: "A library called by PETSc failed." },
+  "Object is in wrong state": { outcome: "broken", text: "PETSc refused to start the solve." },
+};
+
+const petscLine = /^\[(\d{1,8})\] ?(?:PETSC ERROR: ?)?(.*)$/;
+const pythonCode = /^(?:petsc4py\.PETSc\.Error: )?error code (\d{1,4})$/;
+
+/** Messages of one error: the frames of the call stack carry `at ./file.c:line`, the rest is the message. */
+function isFrame(message: string): boolean {
+  return /\(\) (?:at|line) /.test(message) || /^#\d/.test(message);
+}
+
+export function createFailureReader() {
+  const messages: { text: string; line: number }[] = [];
+  let batch: Failure | null = null;
+  let banner: number | null = null;
+  let signalled: { text: string; line: number } | null = null;
+  const mumpsCode: { code: number; detail: number | null; line: number }[] = [];
+
+  function readPetsc(message: string, line: number, isBanner: boolean): void {
+    if (isBanner) banner ??= line;
+    if (/^-+ ?Error Message|^-{10,}|^See https?:|^Configure options|^Petsc (?:Release|Development)|^\S+ on a \S* ?named /.test(message) || message === "") return;
+    if (/^Caught signal number/.test(message)) signalled ??= { text: message.slice(0, 200), line };
+    const code = /INFOG?\(1\)= ?(-?\d{1,9})(?:, INFOG?\(2\)= ?(-?\d{1,18}))?$/.exec(message);
+    if (code !== null && mumpsCode.length < 20) {
+      mumpsCode.push({ code: Number(code[1]), detail: code[2] === undefined ? null : Number(code[2]), line });
+    }
+    if (!isFrame(message) && messages.length < 12) messages.push({ text: message.slice(0, 300), line });
+  }
+
+  return {
+    /** Takes error banners of any rank and the batch system's own lines; false for all other lines. */
+    take(text: string, line: number): boolean {
+      const code = text.charCodeAt(0);
+      if (code === 91) {
+        const match = petscLine.exec(text);
+        const isBanner = text.includes("PETSC ERROR");
+        if (match !== null && (isBanner || banner !== null)) {
+          readPetsc((match[2] ?? "").trim(), line, isBanner);
+          return true;
+        }
+      }
+      const python = pythonCode.exec(text);
+      if (python !== null) {
+        banner ??= line;
+        return true;
+      }
+      if (batch !== null) return false;
+      const sign = signs.find(({ pattern }) => pattern.test(text));
+      if (sign !== undefined) batch = { outcome: sign.outcome, line, reason: sign.reason, text: sign.text };
+      return sign !== undefined;
+    },
+    get mumpsCode() {
+      return mumpsCode[0] ?? null;
+    },
+    failure(): Failure | null {
+      if (batch !== null) return batch;
+      if (signalled !== null && /^Caught signal number (?:15|24)/.test(signalled.text)) {
+        return { outcome: null, line: signalled.line, reason: signalled.text, text: "The program was told to end; the log does not say why." };
+      }
+      if (signalled !== null) return { outcome: "broken", line: signalled.line, reason: signalled.text, text: "The program crashed." };
+      const [first] = messages;
+      if (banner === null) return null;
+      if (first === undefined) return { outcome: "broken", line: banner, reason: "ERROR", text: "PETSc reported an error without a message." };
+      const kind = Object.entries(kinds).find(([name]) => messages.some(({ text }) => text.startsWith(name)));
+      const joined = messages.slice(0, 3).map(({ text }) => text).join(": ").slice(0, 390);
+      return { outcome: kind?.[1].outcome ?? "broken", line: first.line, reason: joined, text: kind?.[1].text ?? "PETSc stopped with an error." };
+    },
+  };
+}
+export type FailureReader = ReturnType<typeof createFailureReader>;

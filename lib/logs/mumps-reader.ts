@@ -1,0 +1,66 @@
+/** Statistics MUMPS prints itself (ICNTL(4) >= 2), by name such as `INFOG(29)`; each factorisation adds its own value. */
+export type MumpsReader = {
+  /** Takes a line when it is one of MUMPS' own; false otherwise. */
+  take(text: string, line: number): boolean;
+  /** The value when every factorisation of the log printed the same one. */
+  value(name: string): { value: number; line: number } | null;
+  /** Distinct values printed under a name. */
+  distinct(name: string): number;
+  readonly version: string | null;
+};
+
+const statistic = /^(?:-+ *|\*\* )?(?:.{0,60}\()?(RINFOG|INFOG|ICNTL)? ?\((\d{1,2})\)[^=:]{0,60}(?:=|\)?:) *(-?\d+(?:\.\d+)?(?:[DE][+-]\d{2,3})?)$/;
+const returned = /^On return from [SDCZ]MUMPS, INFOG\(([12])\)= *(-?\d{1,18})$/;
+const entering = /^Entering [SDCZ]MUMPS (\d+\.\d+(?:\.\d+)?\w{0,10}) from /;
+/** Names that stand for the same thing when printed without `INFOG`. */
+const wanted = new Set(["RINFOG(1)", "RINFOG(3)", "INFOG(1)", "INFOG(2)", "INFOG(13)", "INFOG(20)", "INFOG(22)", "INFOG(29)", "ICNTL(35)"]);
+
+export function createMumpsReader(): MumpsReader {
+  const values = new Map<string, { value: number; line: number; distinct: number }>();
+  let version: string | null = null;
+  let family = "INFOG";
+
+  function state(name: string, value: number, line: number): void {
+    const known = values.get(name);
+    if (known === undefined) values.set(name, { value, line, distinct: 1 });
+    else if (known.value !== value) known.distinct += 1;
+  }
+
+  return {
+    take(text, line) {
+      const entered = entering.exec(text);
+      if (entered !== null) {
+        version = entered[1] ?? null;
+        return true;
+      }
+      const end = returned.exec(text);
+      if (end !== null) {
+        state(`INFOG(${end[1]})`, Number(end[2]), line);
+        return true;
+      }
+      const match = statistic.exec(text);
+      if (match === null) return false;
+      // `------(3)  Operations ...` continues the family of the line above, `-- (20) ...` is always INFOG.
+      family = match[1] ?? (text.startsWith("---") ? family : "INFOG");
+      const name = `${family}(${match[2]})`;
+      const value = Number((match[3] ?? "").replace("D", "e"));
+      if (!wanted.has(name) || !Number.isFinite(value)) return true;
+      // Success of the analysis is printed as INFOG(1) = 0; only the return of a failed phase counts.
+      if (!name.startsWith("INFOG(1)") && !name.startsWith("INFOG(2)")) state(name, value, line);
+      return true;
+    },
+    value(name) {
+      const found = values.get(name);
+      return found === undefined || found.distinct > 1 ? null : { value: found.value, line: found.line };
+    },
+    distinct: (name) => values.get(name)?.distinct ?? 0,
+    get version() {
+      return version;
+    },
+  };
+}
+
+/** MUMPS gives large counts as minus the number of millions. */
+export function countOf(value: number): number {
+  return value < 0 ? -value * 1e6 : value;
+}

@@ -1,0 +1,47 @@
+const optionLimit = 400;
+
+export type LoggedOption = { name: string; value: string | null };
+
+/** Reads the option table and the list of unused options that PETSc prints at its end. */
+export function createOptionReader() {
+  const options = new Map<string, string | null>();
+  const unused = new Map<string, { value: string | null; line: number }>();
+  let announced: { count: number; line: number } | null = null;
+  let inTable = false;
+
+  return {
+    /** Takes a line of the table or of the list; false for all other lines. */
+    take(text: string, line: number): boolean {
+      if (/^#?PETSc Option Table entries:/.test(text)) {
+        inTable = true;
+        return true;
+      }
+      if (/^#?End of PETSc Option Table/.test(text)) {
+        inTable = false;
+        return true;
+      }
+      const left = /^Option left: name:(-\S{1,200})(?: (?:value: (.{0,300}?)|\(?no value\)?))?(?: source: .*)?$/.exec(text.trimEnd());
+      if (left?.[1] !== undefined) {
+        if (unused.size < optionLimit && !unused.has(left[1])) unused.set(left[1], { value: left[2] ?? null, line });
+        return true;
+      }
+      const several = /^There (?:are (\d{1,6}) unused database options|is one unused database option)\b/.exec(text);
+      if (several !== null) {
+        announced = { count: several[1] === undefined ? 1 : Number(several[1]), line };
+        return true;
+      }
+      if (!inTable) return false;
+      const entry = /^(-[A-Za-z]\S{0,200})(?: (.{1,300}?))?(?: ?[#(] ?\(?source: .*)?$/.exec(text.trimEnd());
+      if (entry?.[1] === undefined) inTable = false;
+      else if (options.size < optionLimit) options.set(entry[1], entry[2] ?? null);
+      return entry !== null;
+    },
+    options: (): LoggedOption[] => [...options].map(([name, value]) => ({ name, value })),
+    unused: (): { name: string; line: number }[] => [...unused].map(([name, { line }]) => ({ name, line })),
+    /** How many unused options PETSc counted, null when it did not say. */
+    get announced() {
+      return announced;
+    },
+  };
+}
+export type OptionReader = ReturnType<typeof createOptionReader>;

@@ -1,0 +1,111 @@
+import { createClaim } from "@/lib/logs/claim";
+import type { LoggedEvent, PerformanceSummary } from "@/lib/logs/parsed-log";
+
+const eventLimit = 300;
+const eventRow = /^([A-Za-z][\w+:-]{0,60}) +(\d{1,12}) +\d+\.\d +(\d\.\d{4}e[+-]\d{2,3}) +(\d+\.\d(?:e[+-]\d{2})?|inf|nan) /;
+const startedBy = / with (\d{1,8}) process(?:or)?(?:s|\(es\))?,? by /;
+const ratioRow = /^(?:Time \(sec\)|Flops?):\s+(\d\.\d{3,6}e[+-]\d{2,3})\s+(\d+\.\d{3,5})\s/;
+
+type EventSum = LoggedEvent & { ambiguous: boolean; stages: Map<number, string> };
+
+/** Reads the performance summary (`-log_view`, formerly `-log_summary`): header, totals, event table of every stage. */
+export function createPerformanceReader() {
+  let place: "before" | "header" | "table" | "after" = "before";
+  let stage = -1;
+  let flopsRatioLine: number | null = null;
+  const processes = createClaim<number>();
+  const totalSeconds = createClaim<number>();
+  const timeRatio = createClaim<number>();
+  const flopsRatio = createClaim<number>();
+  const version = createClaim<string>();
+  const events = new Map<string, EventSum>();
+
+  function readHeader(text: string, line: number): void {
+    const started = startedBy.exec(text);
+    if (started !== null && processes.line === null) processes.state(Number(started[1]), line);
+    const release = /^Using Petsc (?:Release Version (\d+\.\d+\.\d+)|Development (?:GIT|HG) revision: (\S{1,60}))/.exec(text);
+    if (release !== null) version.state(release[1] ?? release[2] ?? "", line);
+    const ratio = ratioRow.exec(text);
+    if (ratio === null) return;
+    if (text.startsWith("Time")) {
+      totalSeconds.state(Number(ratio[1]), line);
+      timeRatio.state(Number(ratio[2]), line);
+    } else {
+      flopsRatio.state(Number(ratio[2]), line);
+      flopsRatioLine ??= line;
+    }
+  }
+
+  function readEvent(text: string, line: number): void {
+    const match = eventRow.exec(text);
+    if (match === null) return;
+    const [row, name = "", calls, seconds, printedRatio] = match;
+    const ratio = Number(printedRatio);
+    const timeRatioOfEvent = Number.isFinite(ratio) ? ratio : 0;
+    const known = events.get(name);
+    if (known === undefined) {
+      if (events.size >= eventLimit) return;
+      const stages = new Map([[stage, row]]);
+      events.set(name, { name, calls: Number(calls), seconds: Number(seconds), timeRatio: timeRatioOfEvent, line, ambiguous: false, stages });
+      return;
+    }
+    const sameStage = known.stages.get(stage);
+    if (sameStage !== undefined) {
+      known.ambiguous = known.ambiguous || sameStage !== row;
+      return;
+    }
+    known.stages.set(stage, row);
+    known.calls += Number(calls);
+    known.seconds += Number(seconds);
+    known.timeRatio = Math.max(known.timeRatio, timeRatioOfEvent);
+  }
+
+  function readTable(text: string, line: number): void {
+    const stageRow = /^--- Event Stage (\d{1,4}):/.exec(text);
+    if (stageRow !== null) stage = Number(stageRow[1]);
+    else if (/^(?:Object Type|Memory usage is given|====)/.test(text)) place = "after";
+    else if (stage >= 0) readEvent(text, line);
+  }
+
+  return {
+    /** Whether a line opens a summary. */
+    opens: (text: string) => text.charCodeAt(0) === 45 && text.includes(" PETSc Performance Summary: "),
+    take(text: string, line: number): void {
+      if (place === "before") place = "header";
+      else if (place === "header") {
+        if (/^Event +Count +Time/.test(text)) place = "table";
+        else readHeader(text, line);
+      } else if (place === "table") readTable(text, line);
+    },
+    get reading() {
+      return place === "header" || place === "table";
+    },
+    get started() {
+      return place !== "before";
+    },
+    get tableComplete() {
+      return place === "after";
+    },
+    processes,
+    version,
+    /** An event summed over the stages; null when absent, ambiguous or when the table is not complete. */
+    event(name: string): LoggedEvent | null {
+      const found = events.get(name);
+      if (place !== "after" || found === undefined || found.ambiguous) return null;
+      return { name, calls: found.calls, seconds: found.seconds, timeRatio: found.timeRatio, line: found.line };
+    },
+    isAmbiguous: (name: string) => events.get(name)?.ambiguous === true,
+    summary(): PerformanceSummary | null {
+      if (place === "before") return null;
+      const complete = place === "after" ? [...events.values()].filter((event) => !event.ambiguous) : [];
+      return {
+        totalSeconds: totalSeconds.value,
+        timeRatio: timeRatio.value,
+        flopsRatio: flopsRatio.value,
+        flopsRatioLine,
+        events: complete.map(({ name, calls, seconds, timeRatio: ratio, line }) => ({ name, calls, seconds, timeRatio: ratio, line })),
+      };
+    },
+  };
+}
+export type PerformanceReader = ReturnType<typeof createPerformanceReader>;
