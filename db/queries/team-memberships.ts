@@ -1,11 +1,17 @@
-import { and, asc, eq } from "drizzle-orm";
+import { and, asc, eq, sql } from "drizzle-orm";
+import type { Role } from "@/lib/auth/permissions";
 import type { Database } from "../client";
 import { member, organization, user } from "../schema/auth";
-import type { Role } from "@/lib/auth/permissions";
 
-export type Membership = { teamId: string; teamName: string; role: Role };
+export type Membership = { teamId: string; teamName: string; role: Role; demonstration: boolean };
+export type KeyHolder = Membership & { userId: string; userName: string; userEmail: string };
 
-const columns = { teamId: organization.id, teamName: organization.name, role: member.role };
+const columns = {
+  teamId: organization.id,
+  teamName: organization.name,
+  role: member.role,
+  demonstration: sql<boolean>`coalesce((${organization.metadata}::jsonb ->> 'demonstration')::boolean, false)`,
+};
 
 /** The teams of a person, the one joined first in front; ties by id, so that the default team does not jump. */
 export function listMemberships(db: Database, userId: string): Promise<Membership[]> {
@@ -16,8 +22,6 @@ export function listMemberships(db: Database, userId: string): Promise<Membershi
     .where(eq(member.userId, userId))
     .orderBy(asc(member.createdAt), asc(organization.id));
 }
-
-export type KeyHolder = Membership & { userId: string; userName: string; userEmail: string };
 
 /** A person as a member of one team; undefined when they are not one (any more). */
 export async function findKeyHolder(db: Database, params: { userId: string; teamId: string }): Promise<KeyHolder | undefined> {

@@ -1,13 +1,14 @@
 import { headers as requestHeaders } from "next/headers";
 import { redirect } from "next/navigation";
+import { cache } from "react";
 import { z } from "zod";
 import { authDatabase } from "@/db/client";
 import { findKeyHolder, listMemberships, type Membership } from "@/db/queries/team-memberships";
 import { getAuth, keyPrefix } from "./auth";
-import type { Actor } from "./guard";
+import type { Actor, SignedIn } from "./guard";
 
 /** A signed-in person, with or without a team. */
-export type Person = { userId: string; userName: string; userEmail: string; sessionToken: string; activeTeamId: string | null; teams: Membership[] };
+export type Person = SignedIn & { activeTeamId: string | null; teams: Membership[] };
 
 /**
  * Who sends a request: the holder of the bearer key if there is one, else the person of the session cookie with the active team.
@@ -35,11 +36,13 @@ export async function personFromHeaders(headers: Headers): Promise<Person | null
   };
 }
 
+/** The person who asks for the present page; looked up once for all its parts. */
+export const currentPerson = cache(async (): Promise<Person | null> => personFromHeaders(await requestHeaders()));
+
 /** For signed-in pages: the actor, or a redirect to sign in (and back) or, without a team, to making one. */
 export async function requireActor(): Promise<Actor> {
-  const headers = await requestHeaders();
-  const person = await personFromHeaders(headers);
-  if (!person) redirect(`/sign-in?next=${encodeURIComponent(headers.get("x-pathname") ?? "/cases")}`);
+  const person = await currentPerson();
+  if (!person) redirect(`/sign-in?next=${encodeURIComponent((await requestHeaders()).get("x-pathname") ?? "/cases")}`);
   const actor = actorOf(person);
   if (!actor) redirect("/register/team");
   return actor;
@@ -50,7 +53,7 @@ export function actorOf(person: Person): Actor | null {
   const team = person.teams.find(({ teamId }) => teamId === person.activeTeamId) ?? person.teams[0];
   if (!team) return null;
   const { userId, userName, userEmail } = person;
-  return { userId, userName, userEmail, ...team, via: { kind: "session" } };
+  return { userId, userName, userEmail, teamId: team.teamId, teamName: team.teamName, role: team.role, via: { kind: "session" } };
 }
 
 const keyMetadataSchema = z.object({ teamId: z.string().min(1), scope: z.enum(["read", "write"]) });
@@ -64,5 +67,7 @@ async function actorFromKey(authorization: string): Promise<Actor | null> {
   if (!metadata.success) return null;
   // The key can do what its maker may do now, not what they might do when it was made.
   const holder = await findKeyHolder(authDatabase(), { userId: checked.key.referenceId, teamId: metadata.data.teamId });
-  return holder ? { ...holder, via: { kind: "key", keyId: checked.key.id, scope: metadata.data.scope } } : null;
+  if (!holder) return null;
+  const { userId, userName, userEmail, teamId, teamName, role } = holder;
+  return { userId, userName, userEmail, teamId, teamName, role, via: { kind: "key", keyId: checked.key.id, scope: metadata.data.scope } };
 }

@@ -58,3 +58,41 @@ export function defineUseCase<Input extends z.ZodType, Output>(definition: UseCa
   };
   return Object.assign(execute, { permission: definition.permission, input: definition.input });
 }
+
+/** Somebody signed in, with or without a team. */
+export type SignedIn = { userId: string; userName: string; userEmail: string; sessionToken: string };
+
+type OpenUseCase<Context, Input extends z.ZodType, Output> = {
+  (context: Context, input: unknown): Promise<Output>;
+  permission: "public" | "signed-in";
+  input: Input;
+};
+
+/** A use-case for anybody; says "public" out loud. Throws AppError "invalid". */
+export function definePublicUseCase<Input extends z.ZodType, Output>(definition: {
+  permission: "public";
+  input: Input;
+  run: (request: { headers: Headers }, input: z.output<Input>) => Promise<Output>;
+}): OpenUseCase<{ headers: Headers }, Input, Output> {
+  const execute = async (request: { headers: Headers }, input: unknown) => definition.run(request, parseInput(definition.input, input));
+  return Object.assign(execute, { permission: definition.permission, input: definition.input });
+}
+
+/** A use-case for any account, in whatever team or none. Throws AppError "unauthenticated" or "invalid". */
+export function definePersonUseCase<Input extends z.ZodType, Output>(definition: {
+  permission: "signed-in";
+  input: Input;
+  run: (person: SignedIn, input: z.output<Input>) => Promise<Output>;
+}): OpenUseCase<SignedIn | null, Input, Output> {
+  const execute = async (person: SignedIn | null, input: unknown) => {
+    if (!person) throw new AppError("unauthenticated", "Sign in first.");
+    return definition.run(person, parseInput(definition.input, input));
+  };
+  return Object.assign(execute, { permission: definition.permission, input: definition.input });
+}
+
+function parseInput<Input extends z.ZodType>(schema: Input, input: unknown): z.output<Input> {
+  const parsed = schema.safeParse(input);
+  if (!parsed.success) throw new AppError("invalid", "Some answers can't be used.", { fields: fieldErrorsOf(parsed.error) });
+  return parsed.data;
+}
