@@ -81,7 +81,7 @@ export function describeEffect(effect: Effect, nameOf: (strategy: Effect["strate
     case "caution":
       return effect.strategy === null ? `caution: ${effect.text}` : `caution for ${nameOf(effect.strategy)}: ${effect.text}`;
     case "fallback":
-      return `fall back from ${nameOf(effect.strategy)} to ${nameOf(effect.to)} ${effect.when}`;
+      return `fall back from ${nameOf(effect.strategy)} to ${nameOf(effect.to)} when ${effect.when}`;
   }
 }
 

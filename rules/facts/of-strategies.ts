@@ -16,8 +16,23 @@ export const factPrefixes: Record<StrategyId, string> = {
   "p-multigrid": "pMultigrid",
 };
 
+/** Last part of a strategy's facts. */
+export const strategyFactSuffixNames = [
+  "Iterations",
+  "MemoryGiB",
+  "MemoryShare",
+  "HighMemoryShare",
+  "SetupSeconds",
+  "SolveSeconds",
+  "TotalSeconds",
+  "SetupShare",
+  "TimeLimitShare",
+  "EvidenceRuns",
+] as const;
+export type StrategyFactSuffix = (typeof strategyFactSuffixNames)[number];
+
 type Suffix = {
-  suffix: string;
+  suffix: StrategyFactSuffix;
   label: string;
   plural: boolean;
   unit: string;
@@ -26,7 +41,7 @@ type Suffix = {
   description: string;
 };
 
-const estimate = (suffix: string, label: string, unit: string, description: string, plural = false): Suffix => ({
+const estimate = (suffix: StrategyFactSuffix, label: string, unit: string, description: string, plural = false): Suffix => ({
   suffix,
   label,
   plural,
@@ -37,7 +52,7 @@ const estimate = (suffix: string, label: string, unit: string, description: stri
 });
 
 /** What is known of every strategy: medians of its estimate, and the runs recorded of it. */
-export const strategyFactSuffixes = [
+const strategyFactSuffixes: readonly Suffix[] = [
   estimate("Iterations", "predicted iterations", "", "Median of the predicted iterations; 0 for a factorisation.", true),
   estimate("MemoryGiB", "predicted memory", "GiB", "Median of the predicted peak memory over all processes."),
   estimate("MemoryShare", "share of the machine's memory", "", "Median memory over the memory of all nodes."),
@@ -56,9 +71,7 @@ export const strategyFactSuffixes = [
     whole: true,
     description: "Runs of this strategy in the team's record that speak in its evidence factor.",
   },
-] as const satisfies readonly Suffix[];
-
-export type StrategyFactSuffix = (typeof strategyFactSuffixes)[number]["suffix"];
+];
 
 /** Name of one strategy's fact, such as `schurDiagDirectIterations`. */
 export function strategyFactName(strategy: StrategyId, suffix: StrategyFactSuffix): string {

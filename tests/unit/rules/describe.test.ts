@@ -39,7 +39,7 @@ describe("rules in words", () => {
     ["exclude bddc: No subdomains.", { kind: "exclude", strategy: "bddc", reason: "No subdomains." }],
     ["set restart of bddc to 30", { kind: "set", strategy: "bddc", parameter: "restart", value: 30 }],
     ["caution: Mind the pressure.", { kind: "caution", strategy: null, text: "Mind the pressure." }],
-    ["fall back from bddc to direct-ldlt when it stalls", { kind: "fallback", strategy: "bddc", to: "direct-ldlt", when: "when it stalls" }],
+    ["fall back from bddc to direct-ldlt when it stalls", { kind: "fallback", strategy: "bddc", to: "direct-ldlt", when: "it stalls" }],
   ])("say %s", (words, effect) => {
     expect(describeEffect(effect)).toBe(words);
   });
