@@ -1,0 +1,112 @@
+import type { Answers } from "@/lib/questionnaire/answers";
+import { flatCutFacesOf } from "@/lib/sizes/compute-sizes";
+import { cellsInLayerOf } from "@/lib/sizes/cell-layers";
+import { couplingPerFace } from "@/lib/sizes/nonzeros";
+import type { Sizes } from "@/lib/sizes/sizes";
+import { advisedGamma } from "@/lib/strategies/regularisation";
+import type { CostKit, DirectCost, SpectralInterval } from "@/lib/strategies/cost";
+import type { ModelConstants } from "./constants";
+import { directCost } from "./direct-cost";
+import { dissect } from "./front-model";
+import { iterationCounts, residualLag } from "./iteration-counts";
+import { machineModel, type MachineModel } from "./machine-model";
+import { multigridCost } from "./multigrid-cost";
+import { spectralInterval } from "./spectral-interval";
+import { subdomainCost } from "./subdomain-cost";
+
+/** Binds the models to one case and machine. Results that several strategies need are computed once. */
+export function makeKit(answers: Answers, sizes: Sizes, constants: ModelConstants): CostKit {
+  const machine = machineModel(answers.hardware, constants);
+  const system = activeSystem(sizes);
+  const multipliers = multiplierSystem(answers, sizes);
+  const interval = once<SpectralInterval>(() => spectralInterval(answers));
+  const gamma = advisedGamma({ answers, sizes });
+  return {
+    system,
+    multipliers,
+    gamma,
+    spectralInterval: interval,
+    factoriseSystem: ({ lowRank }) => factoriseSystem({ answers, sizes, system, machine, constants }, lowRank),
+    factoriseSchur: once(() => factoriseSchur({ answers, sizes, system, machine, constants })),
+    multigridOn: (block) => {
+      const blocks = {
+        schur: { name: "the Schur complement", unknowns: system.pressureUnknowns, nonzeros: system.schurNonzeros, sweeps: constants.multigridSweeps },
+        augmented: { name: "the augmented block", unknowns: system.velocityUnknowns, nonzeros: system.velocityNonzeros, sweeps: constants.multigridSweeps / 2 },
+        multipliers: { name: "the face multipliers", unknowns: multipliers.unknowns, nonzeros: multipliers.nonzeros, sweeps: constants.multigridSweeps },
+        auxiliary: { name: "the auxiliary spaces", unknowns: system.velocityUnknowns, nonzeros: system.velocityNonzeros, sweeps: constants.auxiliarySweeps },
+      };
+      return multigridCost(blocks[block], machine, constants);
+    },
+    iterations: iterationCounts({ answers, sizes, constants, interval }),
+    residualLag: (norm) => residualLag(norm, { answers, sizes, constants }),
+    iterationSeconds: ({ nonzeros, unknowns, vectors, reductions }) => {
+      const bytes = 12 * nonzeros + 8 * unknowns * vectors;
+      const halo = machine.cores > 1 ? 6 * machine.latencySeconds : 0;
+      return machine.streamSeconds(bytes, bytes) + halo + reductions * machine.reductionSeconds();
+    },
+    subdomains: (kind) => subdomainCost(kind, { answers, sizes, system, machine, constants }),
+    storageBytes: (nonzeros, unknowns, vectors) => 12 * nonzeros * constants.matrixCopies + 8 * unknowns * vectors,
+    streamSeconds: (bytes) => machine.streamSeconds(bytes, bytes),
+  };
+}
+
+export type KitCase = { answers: Answers; sizes: Sizes; system: CostKit["system"]; machine: MachineModel; constants: ModelConstants };
+
+/** What is solved for once prescribed boundary fluxes are out. Nonzeros shrink in proportion to their unknowns. */
+function activeSystem(sizes: Sizes): CostKit["system"] {
+  const velocityUnknowns = sizes.velocityUnknowns - sizes.eliminatedVelocityUnknowns;
+  const kept = velocityUnknowns / sizes.velocityUnknowns;
+  const velocityNonzeros = sizes.nonzeros.velocityBlock * kept;
+  return {
+    unknowns: velocityUnknowns + sizes.pressureUnknowns,
+    velocityUnknowns,
+    pressureUnknowns: sizes.pressureUnknowns,
+    nonzeros: velocityNonzeros + 2 * sizes.nonzeros.divergenceBlock * kept,
+    velocityNonzeros,
+    schurNonzeros: sizes.schurNonzeros,
+  };
+}
+
+/** Multipliers: the face moments of the inner faces; each couples with all moments of the two cells of its face. */
+function multiplierSystem({ boundary }: Answers, sizes: Sizes): CostKit["multipliers"] {
+  const faces = boundary === "flux-everywhere" ? sizes.faces : sizes.faces - sizes.boundaryFaces;
+  const unknowns = Math.max(1, faces * sizes.perFace);
+  return { unknowns, nonzeros: unknowns * sizes.perFace * (2 * sizes.facesPerCell - 1) };
+}
+
+function factoriseSystem({ answers, sizes, system, machine, constants }: KitCase, lowRank: boolean): DirectCost {
+  const tree = dissect(
+    {
+      cells: sizes.cells,
+      perSeparatorArea: flatCutFacesOf(answers, sizes) * sizes.perFace,
+      perCell: sizes.perCellVelocity + sizes.perCellPressure,
+      perCellBorder: sizes.facesPerCell * sizes.perFace,
+    },
+    constants.separatorThickness,
+  );
+  return directCost({ name: "the saddle-point matrix", unknowns: system.unknowns, nonzeros: system.nonzeros, tree }, machine, constants, lowRank);
+}
+
+/**
+ * The Schur complement's graph has cells for nodes: a separator is a layer of cells, or, where pressures have nodes on the faces, those of the faces of
+ * a flat cut.
+ */
+function factoriseSchur({ answers, sizes, system, machine, constants }: KitCase): DirectCost {
+  const layer = cellsInLayerOf(answers, sizes) * sizes.perCellPressure;
+  const nodal = flatCutFacesOf(answers, sizes) * couplingPerFace(answers.discretisation, answers.degree);
+  const tree = dissect(
+    {
+      cells: sizes.cells,
+      perSeparatorArea: answers.discretisation === "vem-mixed" ? layer : Math.min(layer, nodal),
+      perCell: sizes.perCellPressure,
+      perCellBorder: (sizes.facesPerCell / 2) * sizes.perCellPressure,
+    },
+    constants.schurSeparatorThickness,
+  );
+  return directCost({ name: "the Schur complement", unknowns: system.pressureUnknowns, nonzeros: system.schurNonzeros, tree }, machine, constants, false);
+}
+
+function once<T>(compute: () => T): () => T {
+  let value: { held: T } | null = null;
+  return () => (value ??= { held: compute() }).held;
+}
