@@ -1,5 +1,6 @@
 import Link from "next/link";
 import { cn } from "@/components/ui/cn";
+import { leastCasesForRate } from "@/lib/hit-rates/definitions";
 import { formatOf, formatPercent, formatRange } from "@/lib/shared/format";
 
 export type RateTableCell = { x: number; n: number; low: number; high: number; /** Opens the cases behind the figure. */ href: string };
@@ -62,7 +63,7 @@ function RateCell({ cell, name }: { cell: RateTableCell | null; name: string }) 
   return (
     <td className="figures border border-hairline p-0 text-right" style={{ backgroundColor: `color-mix(in srgb, var(--forest) ${Math.round(share * 42)}%, var(--sheet))` }}>
       <Link href={cell.href} className="block px-2 py-1.5 hover:underline" title={`95 % interval ${interval}`} aria-label={`${name}: ${formatPercent(share)}, ${formatOf(cell.x, cell.n)}, 95 % interval ${interval}`}>
-        <span className="block font-semibold">{formatPercent(share)}</span>
+        {cell.n >= leastCasesForRate && <span className="block font-semibold">{formatPercent(share)}</span>}
         <span className="block text-xs whitespace-nowrap">{formatOf(cell.x, cell.n)}</span>
       </Link>
     </td>

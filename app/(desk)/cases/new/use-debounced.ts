@@ -1,0 +1,13 @@
+"use client";
+
+import { useEffect, useState } from "react";
+
+/** The value once it has stood still for `milliseconds`. */
+export function useDebounced<Value>(value: Value, milliseconds: number): Value {
+  const [settled, setSettled] = useState(value);
+  useEffect(() => {
+    const timer = setTimeout(() => setSettled(value), milliseconds);
+    return () => clearTimeout(timer);
+  }, [value, milliseconds]);
+  return settled;
+}
