@@ -1,0 +1,10 @@
+import { adviceOperations } from "./contract/advice";
+import { caseOperations } from "./contract/cases";
+import { machineOperations } from "./contract/machines";
+import { recordOperations } from "./contract/record";
+import { runOperations } from "./contract/runs";
+import type { Operation } from "./operation";
+
+/** Every call of the API. Routes, the browser's fetcher, the published description and the tests all work from it. */
+export const operations = { ...adviceOperations, ...caseOperations, ...runOperations, ...machineOperations, ...recordOperations } satisfies Record<string, Operation>;
+export type OperationId = keyof typeof operations;
