@@ -1,7 +1,8 @@
 "use server";
 
 import { headers } from "next/headers";
-import { fieldsOf, formResult, type FormResult } from "@/lib/auth/form-result";
+import type { FormResult } from "@/lib/auth/form-answer";
+import { fieldsOf, formResult } from "@/lib/auth/form-result";
 import { personFromHeaders } from "@/lib/auth/actor";
 import { askForReset, resetPassword } from "@/lib/use-cases/account/reset-password";
 import { signIn } from "@/lib/use-cases/account/sign-in";

@@ -5,7 +5,7 @@ import { Field } from "@/components/ui/field";
 import { Input } from "@/components/ui/input";
 import { Notice } from "@/components/ui/notice";
 import { forgotPasswordSchema } from "@/lib/auth/account-schemas";
-import type { FormResult } from "@/lib/auth/form-result";
+import type { FormResult } from "@/lib/auth/form-answer";
 import { FormBody } from "./form-body";
 import { useActionForm } from "./use-action-form";
 

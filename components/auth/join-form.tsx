@@ -3,7 +3,7 @@
 import { useState, useTransition } from "react";
 import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
-import type { FormResult } from "@/lib/auth/form-result";
+import type { FormResult } from "@/lib/auth/form-answer";
 import { goTo } from "./go-to";
 
 /** The one button of an invitation, for somebody who is signed in with its address. */

@@ -3,7 +3,7 @@
 import { Field } from "@/components/ui/field";
 import { Input } from "@/components/ui/input";
 import { signInSchema } from "@/lib/auth/account-schemas";
-import type { FormResult } from "@/lib/auth/form-result";
+import type { FormResult } from "@/lib/auth/form-answer";
 import { FormBody } from "./form-body";
 import { goTo } from "./go-to";
 import { useActionForm } from "./use-action-form";

@@ -4,7 +4,7 @@ import { z } from "zod";
 import { Field } from "@/components/ui/field";
 import { Input } from "@/components/ui/input";
 import { teamNameField } from "@/lib/auth/account-schemas";
-import type { FormResult } from "@/lib/auth/form-result";
+import type { FormResult } from "@/lib/auth/form-answer";
 import { FormBody } from "./form-body";
 import { goTo } from "./go-to";
 import { useActionForm } from "./use-action-form";

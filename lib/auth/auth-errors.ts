@@ -22,6 +22,7 @@ export function appErrorOf(error: unknown): unknown {
   const { code = "", message = "" } = body.success ? body.data : {};
   if (error.statusCode === 429) return new AppError("too-many-requests", message || "Too many attempts. Wait a minute, then try again.", { cause: error });
   const known = sentences[code];
+  if (!known && error.statusCode === 401) return new AppError("unauthenticated", "Sign in first.", { cause: error });
   if (!known) return error;
   const fields: FieldError[] = known.path === "" ? [] : [known];
   return new AppError("invalid", known.message, { fields, cause: error });

@@ -1,8 +1,6 @@
-import { AppError, type FieldError } from "@/lib/shared/app-error";
+import { AppError } from "@/lib/shared/app-error";
 import { appErrorOf } from "./auth-errors";
-
-/** What a form's action answers: where to go or what was made, or what is wrong and at which field. */
-export type FormResult<Value = undefined> = { ok: true; value: Value } | { ok: false; message: string; fields: readonly FieldError[] };
+import type { FormResult } from "./form-answer";
 
 /** Runs an action's work; expected failures become sentences, others are logged and told without their details. */
 export async function formResult<Value>(work: () => Promise<Value>): Promise<FormResult<Value>> {

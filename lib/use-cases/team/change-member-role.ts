@@ -3,7 +3,7 @@ import { findMemberRole, lockOwners, updateMemberRole } from "@/db/queries/team-
 import { withTeamAccounts } from "@/db/scope";
 import { defineUseCase } from "@/lib/auth/guard";
 import { AppError } from "@/lib/shared/app-error";
-import { changeRoleSchema } from "./team-schemas";
+import { changeRoleSchema } from "@/lib/auth/team-schemas";
 
 /** Gives a member another role. Throws AppError "not-found", or "conflict" for the only owner. */
 export const changeMemberRole = defineUseCase({

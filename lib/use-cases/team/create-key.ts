@@ -3,7 +3,7 @@ import { deleteTeamKey } from "@/db/queries/team-keys";
 import { withTeamAccounts } from "@/db/scope";
 import { getAuth } from "@/lib/auth/auth";
 import { defineUseCase } from "@/lib/auth/guard";
-import { createKeySchema } from "./team-schemas";
+import { createKeySchema } from "@/lib/auth/team-schemas";
 
 /** Makes a key of the team for scripts. Its text is in this answer and nowhere else: the database holds a hash. */
 export const createKey = defineUseCase({

@@ -8,7 +8,7 @@ import { invitationEmail } from "@/lib/email/invitation-email";
 import { enqueue } from "@/lib/jobs/queue";
 import { AppError } from "@/lib/shared/app-error";
 import { newId } from "./new-id";
-import { inviteSchema } from "./team-schemas";
+import { inviteSchema } from "@/lib/auth/team-schemas";
 
 const days = 7;
 

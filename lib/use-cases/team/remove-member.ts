@@ -1,6 +1,6 @@
 import { defineUseCase } from "@/lib/auth/guard";
 import { takeOutMember } from "./take-out-member";
-import { memberIdSchema } from "./team-schemas";
+import { memberIdSchema } from "@/lib/auth/team-schemas";
 
 /** Takes somebody out of the team, with their keys. Throws AppError "not-found", or "conflict" for the only owner. */
 export const removeMember = defineUseCase({

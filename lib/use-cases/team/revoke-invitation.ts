@@ -3,7 +3,7 @@ import { cancelInvitation } from "@/db/queries/team-invitations";
 import { withTeamAccounts } from "@/db/scope";
 import { defineUseCase } from "@/lib/auth/guard";
 import { AppError } from "@/lib/shared/app-error";
-import { invitationIdSchema } from "./team-schemas";
+import { invitationIdSchema } from "@/lib/auth/team-schemas";
 
 /** Makes a pending invitation's link useless. Throws AppError "not-found". */
 export const revokeInvitation = defineUseCase({

@@ -3,7 +3,7 @@ import { deleteTeamKey } from "@/db/queries/team-keys";
 import { withTeamAccounts } from "@/db/scope";
 import { defineUseCase } from "@/lib/auth/guard";
 import { AppError } from "@/lib/shared/app-error";
-import { keyIdSchema } from "./team-schemas";
+import { keyIdSchema } from "@/lib/auth/team-schemas";
 
 /** Ends a key of the team at once. Throws AppError "not-found". */
 export const revokeKey = defineUseCase({

@@ -1,6 +1,6 @@
 import { z } from "zod";
-import { emailField } from "@/lib/auth/account-schemas";
-import { roles } from "@/lib/auth/permissions";
+import { emailField } from "./account-schemas";
+import { roles } from "./permissions";
 
 const roleField = z.enum(roles, "Choose a role.");
 const idField = z.string().min(1).max(100);

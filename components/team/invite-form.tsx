@@ -1,0 +1,43 @@
+"use client";
+
+import { toast } from "sonner";
+import { FormBody } from "@/components/auth/form-body";
+import { useActionForm } from "@/components/auth/use-action-form";
+import { Field } from "@/components/ui/field";
+import { Input } from "@/components/ui/input";
+import { Select } from "@/components/ui/select";
+import type { FormResult } from "@/lib/auth/form-answer";
+import { roles } from "@/lib/auth/permissions";
+import { inviteSchema } from "@/lib/auth/team-schemas";
+
+/** Invites an address into the team by mail. */
+export function InviteForm({ action }: { action: (data: FormData) => Promise<FormResult<undefined>> }) {
+  const form = useActionForm({
+    schema: inviteSchema,
+    defaultValues: { email: "", role: "analyst" },
+    fields: ["email", "role"],
+    action,
+    onDone: () => {
+      toast.success("The invitation is on its way.");
+      form.reset();
+    },
+  });
+  return (
+    <div className="max-w-xl border-t border-hairline pt-4">
+      <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Invite">
+        <div className="grid gap-4 sm:grid-cols-[1fr_10rem]">
+          <Field label="E-mail of the person to invite" error={form.errorOf("email")} required>
+            <Input type="email" inputMode="email" autoComplete="off" {...form.register("email")} />
+          </Field>
+          <Field label="Role" error={form.errorOf("role")} required>
+            <Select {...form.register("role")}>
+              {roles.map((role) => (
+                <option key={role}>{role}</option>
+              ))}
+            </Select>
+          </Field>
+        </div>
+      </FormBody>
+    </div>
+  );
+}
