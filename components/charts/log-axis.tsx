@@ -45,7 +45,7 @@ export function percent(value: number): string {
 }
 
 export function tickText(value: number, unit: QuantityUnit): string {
-  return unit === "count" ? formatSi(value) : formatQuantity(value, unit, 1);
+  return unit === "count" ? formatSi(value) : formatQuantity(value, unit);
 }
 
 function tickEnd(edge: "top" | "bottom", step: 1 | 2 | 5): number {

@@ -15,8 +15,8 @@ type LogLogLinesProps = { title: string; xLabel: string; yLabel: string; xUnit: 
 export function LogLogLines({ title, xLabel, yLabel, xUnit, yUnit, series, className }: LogLogLinesProps) {
   const points = series.flatMap((one) => one.points);
   if (points.length === 0) return <p className={cn("text-sm text-faint", className)}>{title}: nothing to draw yet.</p>;
-  const x = makeLogScale(points.map((point) => point.x));
-  const y = makeLogScale(points.flatMap((point) => [point.low, point.median, point.high]));
+  const x = makeLogScale(points.map((point) => point.x), xUnit);
+  const y = makeLogScale(points.flatMap((point) => [point.low, point.median, point.high]), yUnit);
   const crossings = findCrossings(series);
   const names = new Map<string, string>(series.map((one) => [one.id, one.label]));
   const sentences = crossings.map((crossing) => `${names.get(crossing.first) ?? ""} and ${names.get(crossing.second) ?? ""} cross at ${formatSi(crossing.x)} (${formatQuantity(crossing.y, yUnit)})`);

@@ -33,7 +33,7 @@ export function MemoryBar({ label, need, limitGiB, labelHidden = false, classNam
       <svg role="img" aria-label={sentence} className="block h-6 w-full overflow-visible" style={{ color: colour }}>
         <rect x="0%" y="5" width={percent(at(limitGiB))} height="14" className="fill-wash stroke-hairline" />
         <rect x="0%" y="9" width={percent(at(need.median))} height="6" fill="currentColor" />
-        <rect x={percent(at(need.low))} y="7" width={percent(Math.max(at(need.high) - at(need.low), 0.4))} height="10" fill="currentColor" fillOpacity="0.25" stroke="currentColor" />
+        <rect x={percent(Math.min(at(need.low), 99))} y="7" width={percent(Math.max(at(need.high) - at(need.low), 0.4))} height="10" fill="currentColor" fillOpacity="0.25" stroke="currentColor" />
         <line x1={percent(at(limitGiB))} x2={percent(at(limitGiB))} y1="0" y2="24" className="stroke-ink" strokeWidth="2" />
         {beyond && (
           <svg x="100%" y="12" className="overflow-visible">

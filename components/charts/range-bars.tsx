@@ -44,7 +44,7 @@ type RangeBarsProps = {
 
 /** Ranges of several strategies on one log axis, so that the eye compares them at once. Plain markup: prints, and needs no script. */
 export function RangeBars({ title, axisLabel, unit, rows, reference, titleHidden = false, scale: given, className }: RangeBarsProps) {
-  const scale = given ?? makeLogScale(rows.flatMap(rowValues).concat(reference === undefined ? [] : [reference.value]));
+  const scale = given ?? makeLogScale(rows.flatMap(rowValues).concat(reference === undefined ? [] : [reference.value]), unit);
   return (
     <figure className={cn("@container min-w-0", className)}>
       <figcaption className="mb-2 flex flex-wrap items-baseline justify-between gap-x-4">
@@ -70,25 +70,25 @@ export function RangeBars({ title, axisLabel, unit, rows, reference, titleHidden
   );
 }
 
-const rowGrid = "grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-3 @2xl:grid-cols-[15rem_minmax(0,1fr)_7.5rem]";
+const rowGrid = "grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-3 pr-2.5 @2xl:grid-cols-[15rem_minmax(0,1fr)_7.5rem]";
 
 function Row({ row, scale, unit, reference }: { row: RangeBarsRow; scale: LogScale; unit: QuantityUnit; reference: number | null }) {
   const range = rangeOf(row);
   return (
-    <div className={cn(rowGrid, "py-1 pl-2.5")}>
-      <div className="flex min-w-0 items-start gap-2 text-sm">
-        {row.lead}
+    <div className={cn(rowGrid, "pl-2.5")}>
+      <div className="flex min-w-0 items-start gap-2 pt-1.5 text-sm @2xl:py-2">
+        {row.lead !== undefined && <span className="shrink-0">{row.lead}</span>}
         <StrategyMark id={row.mark} hollow={row.muted === true} className="mt-0.5" />
         <span className="min-w-0">
           <span className={cn("block leading-snug", row.first === true && "font-semibold", row.muted === true && "text-faint")}>{row.label}</span>
           {row.note !== undefined && <span className="block text-xs text-faint">{row.note}</span>}
         </span>
       </div>
-      <div className="figures text-right text-sm @2xl:col-start-3">
+      <div className="figures pt-1.5 text-right text-sm @2xl:col-start-3 @2xl:py-1.5">
         <Quantity value={range?.median} unit={unit} className={cn("font-semibold", row.muted === true && "font-normal text-faint")} />
         {range !== null && <QuantityRange low={range.low} high={range.high} unit={unit} className="block text-xs text-faint" />}
       </div>
-      <div className="col-span-2 px-4 @2xl:col-span-1 @2xl:col-start-2 @2xl:row-start-1">
+      <div className="col-span-2 self-stretch px-4 @2xl:col-span-1 @2xl:col-start-2 @2xl:row-start-1">
         <RangeTrack scale={scale} unit={unit} label={row.label} mark={row.mark} range={range} measured={row.measured ?? []} muted={row.muted === true} reference={reference} />
       </div>
     </div>

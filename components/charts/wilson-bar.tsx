@@ -40,7 +40,12 @@ export function WilsonBar({ label, rate, labelHidden = false, action, className 
           </g>
         )}
       </svg>
-      {known && <div className="figures text-xs text-faint">95 % interval {interval}</div>}
+      {known && (
+        <div className="figures flex justify-between gap-x-4 text-xs text-faint">
+          <span>95 % interval {interval}</span>
+          <span>scale 0 to 100 %</span>
+        </div>
+      )}
     </div>
   );
 }

@@ -7,11 +7,11 @@ const rows: readonly RangeBarsRow[] = [
   { id: "3", label: "Hybridised, multigrid", mark: "hybridized-amg", low: 11, median: 22, high: 46, lead: <Rank>3</Rank> },
   { id: "4", label: "Sparse direct LDLᵀ", mark: "direct-ldlt", low: 38, median: 52, high: 71, measured: [49], lead: <Rank>4</Rank> },
   { id: "5", label: "Regularised, multigrid", mark: "regularized-amg", low: 41, median: 88, high: 190, lead: <Rank>5</Rank> },
-  { id: "6", label: "BDDC", mark: "bddc", low: null, median: null, high: null, muted: true, note: "unavailable: the program has no unassembled subdomain matrices" },
+  { id: "6", label: "BDDC", mark: "bddc", low: null, median: null, high: null, muted: true, lead: <Rank>{"–"}</Rank>, note: "unavailable: the program has no unassembled subdomain matrices" },
 ];
 
 function Rank({ children }: { children: string }) {
-  return <span className="figures w-4 text-right text-faint">{children}</span>;
+  return <span className="figures block w-4 text-right text-faint">{children}</span>;
 }
 
 /** What advice looks like, on figures that nobody measured. */

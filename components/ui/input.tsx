@@ -5,7 +5,7 @@ import { cn } from "./cn";
 import { useFieldControl } from "./field";
 
 export const controlClasses =
-  "w-full min-w-0 rounded-sheet border border-contour bg-sheet px-3 text-base text-ink placeholder:text-faint disabled:cursor-not-allowed disabled:opacity-60 read-only:bg-wash aria-invalid:border-bad aria-invalid:border-2";
+  "w-full min-w-0 rounded-sheet border border-contour bg-sheet px-3 text-base text-ink placeholder:text-faint disabled:cursor-not-allowed disabled:opacity-60 [&[readonly]]:bg-wash aria-invalid:border-bad aria-invalid:border-2";
 
 type InputProps = ComponentProps<"input"> & { /** Stands inside the right end of the box. */ unit?: string };
 
@@ -16,7 +16,7 @@ export function Input({ className, unit, required, ...props }: InputProps) {
     <input
       {...props}
       {...useFieldControl({ ...props, required })}
-      className={cn(controlClasses, "h-10 py-1.5", numeric && "figures text-right", unit !== undefined && "border-0 focus-visible:outline-0", className)}
+      className={cn(controlClasses, "h-10 py-1.5", numeric && "figures text-right", unit !== undefined && "border-0 focus-visible:outline-0 aria-invalid:border-0", className)}
     />
   );
   if (unit === undefined) return box;

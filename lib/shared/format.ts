@@ -72,6 +72,11 @@ export function formatNumber(value: MaybeNumber, digits = 3): string {
   return group(rounded(number, digits));
 }
 
+/** A power of ten as an axis label: 1, 10, 10⁻³. */
+export function formatPowerOfTen(value: number): string {
+  return value === 1 || value === 10 ? String(value) : `10${superscript(Math.round(Math.log10(value)))}`;
+}
+
 /** With an SI prefix: 12.4 M, or 3.1 Tflop with a unit. */
 export function formatSi(value: MaybeNumber, unit = "", digits = 3): string {
   const text = special(value);
