@@ -61,17 +61,17 @@ const polyhedra = { discretisation: "vem-mixed" } as const;
 
 /** What the Ellorin desk works on: an invented river basin, its aquifer, a dam and a disposal study, each at several sizes. */
 export const basinThemes: readonly Theme[] = [
-  { title: "Ellorin aquifer, steady flow", answers: { ...polyhedra, meshFamily: "cubes", degree: 1 }, machine: 0, cores: 32 },
+  { title: "Ellorin aquifer, steady flow", answers: { ...polyhedra, meshFamily: "cubes", degree: 1, available: ["parallel-direct", "block-splitting"] }, machine: 0, cores: 32 },
   { title: "Ellorin aquifer, polyhedral grid", answers: { ...polyhedra, meshFamily: "voronoi-relaxed", degree: 1 }, machine: 0, cores: 32 },
   { title: "Upper valley clay lenses", answers: { ...polyhedra, meshFamily: "voronoi", degree: 1, contrast: { ratio: 1e4, pattern: "blocks" } }, machine: 1, cores: 64 },
-  { title: "Gravel terrace, second order", answers: { ...polyhedra, meshFamily: "cubes", degree: 2 }, machine: 0, cores: 32 },
+  { title: "Gravel terrace, second order", answers: { ...polyhedra, meshFamily: "cubes", degree: 2, available: ["parallel-direct", "amg", "hybridised-assembly"] }, machine: 0, cores: 32 },
   { title: "Dam foundation seepage", answers: { discretisation: "bdm", meshFamily: "tetrahedra", degree: 1, boundary: "pressure-somewhere" }, machine: 0, cores: 16 },
-  { title: "Dam foundation seepage, lowest order", answers: { discretisation: "rt", meshFamily: "tetrahedra", degree: 1, boundary: "pressure-somewhere" }, machine: 0, cores: 16 },
+  { title: "Dam foundation seepage, lowest order", answers: { discretisation: "rt", meshFamily: "tetrahedra", degree: 1, boundary: "pressure-somewhere", available: ["amg", "augmented-assembly", "discrete-gradient-curl"] }, machine: 0, cores: 16 },
   { title: "Layered delta", answers: { discretisation: "rt-hex", meshFamily: "cubes", degree: 1, contrast: { ratio: 1e6, pattern: "layers" }, anisotropy: 30 }, machine: 1, cores: 128 },
   { title: "Spillway scour, third order", answers: { discretisation: "rt", meshFamily: "tetrahedra", degree: 3 }, machine: 2, cores: 8 },
-  { title: "Infiltration ponds, time stepping", answers: { discretisation: "rt-hex", meshFamily: "cubes", degree: 1, repeatedSolves: 200 }, machine: 0, cores: 32 },
-  { title: "Fracture corridor", answers: { ...polyhedra, meshFamily: "distorted", degree: 1, contrast: { ratio: 1e3, pattern: "random-field" } }, machine: 1, cores: 64 },
-  { title: "Fine wells, second order", answers: { ...polyhedra, meshFamily: "truncated-octahedra", degree: 2 }, machine: 1, cores: 128 },
+  { title: "Infiltration ponds, time stepping", answers: { discretisation: "rt-hex", meshFamily: "cubes", degree: 1, repeatedSolves: 200, available: ["parallel-direct", "amg", "hybridised-assembly"] }, machine: 0, cores: 32 },
+  { title: "Fracture corridor", answers: { ...polyhedra, meshFamily: "distorted", degree: 1, contrast: { ratio: 1e3, pattern: "random-field" }, available: ["parallel-direct", "amg", "unassembled-subdomains"] }, machine: 1, cores: 64 },
+  { title: "Fine wells, second order", answers: { ...polyhedra, meshFamily: "truncated-octahedra", degree: 2, available: ["parallel-direct", "block-splitting"] }, machine: 1, cores: 128 },
   { title: "Flood plain heat exchange", answers: { discretisation: "bdm", meshFamily: "tetrahedra", degree: 2, boundary: "pressure-somewhere" }, machine: 1, cores: 64 },
 ];
 
