@@ -1,7 +1,7 @@
 import { meshFamilies, type MeshFamily } from "@/lib/questionnaire/answer-sets";
 import { fitBayesRegression, predictBayesRegression, type RegressionPosterior, type RegressionPrior } from "@/lib/numerics/bayes-regression";
 import { studentTQuantile } from "@/lib/numerics/statistics/student-t";
-import { strategyIds, type StrategyId } from "@/lib/shared/strategy-ids";
+import type { StrategyId } from "@/lib/shared/strategy-ids";
 import { designRow, scaledFeatures, type EvidenceFeatures } from "./evidence-features";
 import type { EvidenceCounts } from "./facts";
 

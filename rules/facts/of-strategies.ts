@@ -53,7 +53,7 @@ const estimate = (suffix: StrategyFactSuffix, label: string, unit: string, descr
 
 /** What is known of every strategy: medians of its estimate, and the runs recorded of it. */
 const strategyFactSuffixes: readonly Suffix[] = [
-  estimate("Iterations", "predicted iterations", "", "Median of the predicted iterations; 0 for a factorisation.", true),
+  estimate("Iterations", "predicted iterations", "", "Median of the predicted iterations; 1 for a factorisation.", true),
   estimate("MemoryGiB", "predicted memory", "GiB", "Median of the predicted peak memory over all processes."),
   estimate("MemoryShare", "share of the machine's memory", "", "Median memory over the memory of all nodes."),
   estimate("HighMemoryShare", "share of the machine's memory at the high end", "", "High end of the memory range over the memory of all nodes."),

@@ -35,12 +35,12 @@ export const decompositionRules: RuleSet = [
     enabled: true,
     when: { fact: "contrastRatio", operator: "greaterThanInclusive", value: 1e3 },
     then: [
-      { kind: "disfavour", strategy: "schwarz-two-level", factor: 2 },
+      { kind: "disfavour", strategy: "schwarz-two-level", factor: 1.5 },
       { kind: "favour", strategy: "bddc", factor: 1.2 },
       { kind: "caution", strategy: "bddc", text: "Scale the interface by deluxe weights or by the stiffness; counting weights lose the bound when the coefficient jumps across subdomains." },
       { kind: "fallback", strategy: "schwarz-two-level", to: "bddc", when: "iterations grow with the contrast" },
     ],
-    rationale: "The bound of plain overlapping Schwarz grows with jumps inside the overlap, while weighted averages with adaptive constraints keep that of BDDC. The factors stand for this robustness, which the model leaves out.",
+    rationale: "The bound of plain overlapping Schwarz grows with jumps inside the overlap, while weighted averages with adaptive constraints keep that of BDDC. The factors stand for patterns that are worse, or better, than the mild growth with contrast that the model assumes.",
     source: { kind: "published", citation: "Oh, Widlund, Zampini & Dohrmann, Math. Comp. 87, 2018" },
   },
   {
@@ -63,11 +63,11 @@ export const decompositionRules: RuleSet = [
     enabled: true,
     when: { fact: "cores", operator: "lessThan", value: 16 },
     then: [
-      { kind: "disfavour", strategy: "bddc", factor: 1.3 },
-      { kind: "disfavour", strategy: "schwarz-two-level", factor: 1.3 },
+      { kind: "disfavour", strategy: "bddc", factor: 1 },
+      { kind: "disfavour", strategy: "schwarz-two-level", factor: 1 },
       { kind: "fallback", strategy: "bddc", to: "direct-ldlt", when: "subdomain factorisations take more than half of the time" },
     ],
-    rationale: "Large subdomains cost nearly a whole factorisation each. The factor stands for splitting subdomains by hand to keep them small.",
+    rationale: "Large subdomains cost nearly a whole factorisation each. The set-up estimate already counts this.",
     source: { kind: "common-practice" },
   },
   {
@@ -76,11 +76,11 @@ export const decompositionRules: RuleSet = [
     enabled: true,
     when: { fact: "cores", operator: "greaterThan", value: 4096 },
     then: [
-      { kind: "disfavour", strategy: "bddc", factor: 1.3 },
-      { kind: "disfavour", strategy: "schwarz-two-level", factor: 1.5 },
+      { kind: "disfavour", strategy: "bddc", factor: 1 },
+      { kind: "disfavour", strategy: "schwarz-two-level", factor: 1 },
       { kind: "caution", strategy: "bddc", text: "Solve the coarse problem on a subset of the processes, or by a second level of BDDC." },
     ],
-    rationale: "The coarse problem grows with the number of subdomains and is solved in every iteration. The factor stands for that share, which the model leaves out.",
+    rationale: "The coarse problem grows with the number of subdomains and is solved in every iteration. The estimate already counts this.",
     source: { kind: "common-practice" },
   },
   {
@@ -131,13 +131,13 @@ export const decompositionRules: RuleSet = [
       ],
     },
     then: [
-      { kind: "disfavour", strategy: "schur-diag-amg", factor: 1.2 },
-      { kind: "disfavour", strategy: "regularized-amg", factor: 1.2 },
-      { kind: "disfavour", strategy: "hybridized-amg", factor: 1.2 },
-      { kind: "disfavour", strategy: "hdiv-auxiliary", factor: 1.2 },
+      { kind: "disfavour", strategy: "schur-diag-amg", factor: 1 },
+      { kind: "disfavour", strategy: "regularized-amg", factor: 1 },
+      { kind: "disfavour", strategy: "hybridized-amg", factor: 1 },
+      { kind: "disfavour", strategy: "hdiv-auxiliary", factor: 1 },
       { kind: "caution", strategy: null, text: "Fewer than 5 000 unknowns per core: messages outweigh arithmetic, and fewer cores may be faster." },
     ],
-    rationale: "Coarse levels of multigrid have less than one unknown per core and cost latency only. The factor stands for those levels.",
+    rationale: "Coarse levels of multigrid have less than one unknown per core and cost latency only. The solve time already counts this.",
     source: { kind: "common-practice" },
   },
 ];

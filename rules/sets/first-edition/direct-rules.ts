@@ -12,8 +12,8 @@ export const directRules: RuleSet = [
         { fact: "unknowns", operator: "lessThanInclusive", value: 300_000 },
       ],
     },
-    then: [{ kind: "favour", strategy: "direct-ldlt", factor: 1.25 }],
-    rationale: "High order means dense blocks, which a factorisation handles at full speed, and the factor still fits. The factor stands for the tuning that a preconditioner of high order would need.",
+    then: [{ kind: "favour", strategy: "direct-ldlt", factor: 2 }],
+    rationale: "High order means dense blocks, which a factorisation handles at full speed, and the factor still fits. The factor stands for the second attempt that a preconditioner of high order usually takes.",
     source: { kind: "common-practice" },
   },
   {
@@ -48,10 +48,10 @@ export const directRules: RuleSet = [
     enabled: true,
     when: { fact: "cores", operator: "greaterThan", value: 1024 },
     then: [
-      { kind: "disfavour", strategy: "direct-ldlt", factor: 1.3 },
-      { kind: "disfavour", strategy: "direct-blr", factor: 1.5 },
+      { kind: "disfavour", strategy: "direct-ldlt", factor: 1 },
+      { kind: "disfavour", strategy: "direct-blr", factor: 1.2 },
     ],
-    rationale: "The analysis is largely serial and the last fronts are shared by all processes. Compression makes the work uneven as well. The factor stands for scaling that the model follows only in part.",
+    rationale: "The analysis is largely serial and the last fronts are shared by all processes, which the time estimate counts. Compression makes the work of the processes uneven as well, and that the factor stands for.",
     source: { kind: "common-practice" },
   },
   {
