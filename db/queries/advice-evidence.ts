@@ -6,33 +6,39 @@ import { outcomes } from "@/lib/runs/run";
 import { solverCase } from "../schema/cases";
 import type { TeamDatabase } from "../scope";
 
-/** Text that changes whenever a run of the team is recorded, corrected or withdrawn; cheap enough to ask for with every advice. */
-export async function recordVersion(db: TeamDatabase, scope: Scope): Promise<string> {
+/**
+ * When the team's record of runs last changed, by recording, correcting or withdrawing: ISO 8601 to the microsecond, "" for an empty record.
+ * Two equal instants mean the same record.
+ */
+export async function recordInstant(db: TeamDatabase, scope: Scope): Promise<string> {
   const { rows } = await db.execute(sql`
-    select concat_ws('/', count(*), count(withdrawn_at), sum(revision), max(recorded_at), max(withdrawn_at)) as version from run where team_id = ${scope.teamId}`);
-  return z.array(z.object({ version: z.string() })).parse(rows)[0]?.version ?? "";
+    select coalesce(to_char(greatest(
+      (select max(greatest(recorded_at, withdrawn_at)) from run where team_id = ${scope.teamId}),
+      (select max(changed_at) from run_revision where team_id = ${scope.teamId})
+    ) at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"'), '') as instant`);
+  return z.array(z.object({ instant: z.string() })).parse(rows)[0]?.instant ?? "";
 }
 
 const evidenceRunSchema = z.object({
   caseId: z.string(),
   strategy: z.string(),
+  strategyName: z.string().nullable(),
   outcome: z.enum(outcomes),
+  cores: z.int(),
   setupSeconds: z.number(),
   solveSeconds: z.number(),
   trueRelativeResidual: z.number().nullable(),
-  recordedAt: z.date(),
 });
 export type EvidenceRun = z.infer<typeof evidenceRunSchema>;
 
-/** Runs that can speak: not withdrawn, said to have converged, timed, on their case's cores. In a fixed order. */
-export async function listEvidenceRuns(db: TeamDatabase, scope: Scope): Promise<EvidenceRun[]> {
+/** Runs that can speak: not withdrawn, said to have converged, timed. The `limit` recorded last, in a fixed order. */
+export async function listEvidenceRuns(db: TeamDatabase, scope: Scope, limit: number): Promise<EvidenceRun[]> {
   const { rows } = await db.execute(sql`
-    select r.case_id as "caseId", r.strategy, r.outcome, r.setup_seconds as "setupSeconds", r.solve_seconds as "solveSeconds",
-      r.true_relative_residual as "trueRelativeResidual", r.recorded_at as "recordedAt"
-    from run r join solver_case c on c.id = r.case_id and c.team_id = r.team_id
-    where r.team_id = ${scope.teamId} and r.withdrawn_at is null and r.outcome = 'converged' and r.cores = c.cores
-      and r.setup_seconds is not null and r.solve_seconds is not null
-    order by r.recorded_at, r.id`);
+    select case_id as "caseId", strategy, strategy_name as "strategyName", outcome, cores, setup_seconds as "setupSeconds", solve_seconds as "solveSeconds",
+      true_relative_residual as "trueRelativeResidual"
+    from run
+    where team_id = ${scope.teamId} and withdrawn_at is null and outcome = 'converged' and setup_seconds is not null and solve_seconds is not null
+    order by recorded_at desc, id limit ${limit}`);
   return z.array(evidenceRunSchema).parse(rows);
 }
 

@@ -65,7 +65,7 @@ export const givenAdviceSchema = z.object({
 });
 export type GivenAdvice = z.infer<typeof givenAdviceSchema>;
 
-/** One thing that two pieces of advice on the same case say differently. */
+/** What two pieces of advice on the same case say differently, a sentence each. */
 export const adviceChangesSchema = z.array(z.string());
 
 export const caseDetailSchema = caseSummarySchema.extend({
