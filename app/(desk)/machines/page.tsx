@@ -1,7 +1,7 @@
 import type { Metadata } from "next";
 import { requireActor } from "@/lib/auth/actor";
 import { mayRole } from "@/lib/auth/permissions";
-import { listMachines } from "@/lib/use-cases/list-machines";
+import { listMachines } from "@/lib/use-cases/machines/list-machines";
 import { MachineDesk } from "./machine-desk";
 
 export const metadata: Metadata = { title: "Machines" };

@@ -8,9 +8,9 @@ import { Notice } from "@/components/ui/notice";
 import { requireActor } from "@/lib/auth/actor";
 import { AppError } from "@/lib/shared/app-error";
 import { formatDate } from "@/lib/shared/format-date";
-import { getEdition } from "@/lib/use-cases/get-edition";
-import { hitRates } from "@/lib/use-cases/hit-rates";
-import { listEditions } from "@/lib/use-cases/list-editions";
+import { getEdition } from "@/lib/use-cases/rulebook/get-edition";
+import { readHitRates } from "@/lib/use-cases/hit-rates/read-hit-rates";
+import { listEditions } from "@/lib/use-cases/rulebook/list-editions";
 import { RuleRecord } from "@/components/rulebook/rule-record";
 
 export const metadata: Metadata = { title: "Rulebook" };
@@ -20,12 +20,12 @@ export default async function RulebookPage({ searchParams }: { searchParams: Pro
   const actor = await requireActor();
   const { edition: asked = "live" } = await searchParams;
   const [edition, editions, rates] = await Promise.all([
-    getEdition(actor, { number: String(asked) }).catch((error: unknown) => {
+    getEdition(actor, { number: asked === "live" ? asked : Number(asked) }).catch((error: unknown) => {
       if (error instanceof AppError && (error.code === "not-found" || error.code === "invalid")) notFound();
       throw error;
     }),
     listEditions(actor, { limit: 200 }),
-    hitRates(actor, {}),
+    readHitRates(actor, {}),
   ]);
   const fired = new Map(edition.fired.map((entry) => [entry.rule, entry.count]));
   const groups = new Map(rates.groups.filter((group) => group.by === "rule").map((group) => [group.key, group]));

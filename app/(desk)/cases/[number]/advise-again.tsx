@@ -11,7 +11,7 @@ import { caseKeys } from "@/lib/queries/cases";
 export function AdviseAgain({ reference }: { reference: string }) {
   const queryClient = useQueryClient();
   const again = useMutation({
-    mutationFn: () => callApi<{ changes: string[] }>(`/cases/${reference}/advice`, { method: "POST" }),
+    mutationFn: () => callApi<{ changes: unknown[] }>(`/cases/${reference}/advice`, { method: "POST" }),
     onSuccess: async ({ changes }) => {
       await queryClient.invalidateQueries({ queryKey: caseKeys.all });
       toast(changes.length === 0 ? "New advice: it says the same as before." : "New advice: what changed stands above the ranking.");

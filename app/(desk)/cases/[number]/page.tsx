@@ -3,7 +3,7 @@ import { notFound } from "next/navigation";
 import { requireActor } from "@/lib/auth/actor";
 import { mayRole } from "@/lib/auth/permissions";
 import { AppError } from "@/lib/shared/app-error";
-import { getCase } from "@/lib/use-cases/get-case";
+import { getCase } from "@/lib/use-cases/cases/get-case";
 import { CaseView } from "./case-view";
 
 type CasePageProps = { params: Promise<{ number: string }> };
@@ -16,7 +16,7 @@ export async function generateMetadata({ params }: CasePageProps): Promise<Metad
 export default async function CasePage({ params }: CasePageProps) {
   const actor = await requireActor();
   const { number } = await params;
-  const detail = await getCase(actor, { id: number }).catch((error: unknown) => {
+  const detail = await getCase(actor, { caseRef: number }).catch((error: unknown) => {
     if (error instanceof AppError && (error.code === "not-found" || error.code === "invalid")) notFound();
     throw error;
   });

@@ -7,8 +7,8 @@ import { mayRole } from "@/lib/auth/permissions";
 import { defaultQuestionnaire } from "@/lib/questionnaire/default-questionnaire";
 import { toFormValues } from "@/lib/questionnaire/form-values";
 import { AppError } from "@/lib/shared/app-error";
-import { copyCase } from "@/lib/use-cases/copy-case";
-import { listMachines } from "@/lib/use-cases/list-machines";
+import { copyCase } from "@/lib/use-cases/cases/copy-case";
+import { listMachines } from "@/lib/use-cases/machines/list-machines";
 import { NewCase } from "./new-case";
 
 export const metadata: Metadata = { title: "New case" };
@@ -43,7 +43,7 @@ export default async function NewCasePage({ searchParams }: { searchParams: Prom
 
 async function readCopy(actor: Awaited<ReturnType<typeof requireActor>>, id: string) {
   try {
-    return await copyCase(actor, { id });
+    return await copyCase(actor, { caseRef: id });
   } catch (error) {
     if (error instanceof AppError && (error.code === "not-found" || error.code === "invalid")) return null;
     throw error;
