@@ -11,7 +11,7 @@ import { takeLock } from "./lib/lock.mjs";
 import { ensureNpmPackages } from "./lib/npm-packages.mjs";
 import { PlainError, runMain } from "./lib/plain-error.mjs";
 import { projectRoot } from "./lib/root.mjs";
-import { describeHolder } from "./lib/run-file.mjs";
+import { takeDataFolder } from "./lib/run-file.mjs";
 import { ensureSecrets } from "./lib/secrets.mjs";
 
 await runMain(async () => {
@@ -29,7 +29,7 @@ async function up(dataFolder) {
   await locked(paths, async () => {
     const say = (/** @type {string} */ line) => void process.stderr.write(`${line}\n`);
     await ensureNpmPackages({ root: projectRoot, logFile: join(paths.logs, "npm.log"), say });
-    const { ownerUrl } = await startDatabase({ paths, secrets: ensureSecrets(paths.secrets), startService: startDetached, say });
+    const { ownerUrl } = await startDatabase({ paths, secrets: ensureSecrets(paths), startService: startDetached, say });
     process.stdout.write(`${ownerUrl}\n`);
   });
 }
@@ -48,8 +48,7 @@ async function down(dataFolder) {
  * @param {() => Promise<void>} work
  */
 async function locked(paths, work) {
-  const release = await takeLock(paths.lock);
-  if (release === null) throw describeHolder(paths.run, paths.root);
+  const release = await takeDataFolder(paths);
   try {
     await work();
   } finally {

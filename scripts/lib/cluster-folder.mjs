@@ -2,7 +2,7 @@ import { spawnSync } from "node:child_process";
 import { createHash } from "node:crypto";
 import { chownSync, existsSync, mkdirSync, readFileSync, realpathSync, renameSync, rmSync, writeFileSync } from "node:fs";
 import { dirname, join } from "node:path";
-import { readJsonObject, requireFreeSpace, syncFolder, writeFileDurably } from "./files.mjs";
+import { makeFolder, readJsonObject, requireFreeSpace, syncFolder, writeFileDurably } from "./files.mjs";
 import { PlainError } from "./plain-error.mjs";
 import { findFreePort } from "./ports.mjs";
 import { runStep } from "./processes.mjs";
@@ -83,7 +83,7 @@ export async function ensureCluster({ paths, binaries, account, password, logFil
 async function makeCluster({ folder, binaries, account, password, logFile, signal }) {
   const fresh = `${folder}.new`;
   const passwordFile = `${folder}.password`;
-  mkdirSync(dirname(folder), { recursive: true, mode: 0o711 });
+  makeFolder(dirname(folder), 0o711);
   requireFreeSpace(dirname(folder), emptyClusterBytes);
   rmSync(fresh, { recursive: true, force: true });
   try {

@@ -1,6 +1,6 @@
-import { closeSync, existsSync, fsyncSync, mkdirSync, openSync, readdirSync, realpathSync, rmSync, statSync, writeSync } from "node:fs";
+import { closeSync, existsSync, fsyncSync, openSync, readdirSync, realpathSync, rmSync, statSync, writeSync } from "node:fs";
 import { join } from "node:path";
-import { readJsonObject, requireFreeSpace, writeFileDurably } from "./files.mjs";
+import { makeFolder, readJsonObject, requireFreeSpace, writeFileDurably } from "./files.mjs";
 import { PlainError } from "./plain-error.mjs";
 
 const format = 1;
@@ -36,12 +36,12 @@ export function prepareDataFolder(folder) {
   checkDataFolder(folder);
   // Only root lets others through (not see): the database runs under another account then.
   const mode = process.getuid?.() === 0 ? 0o711 : 0o700;
-  mkdirSync(folder, { recursive: true, mode });
+  makeFolder(folder, mode);
   const paths = dataPaths(realpathSync(folder));
   if (!existsSync(paths.marker)) writeMarker(paths, {});
   probeWriting(paths);
   requireFreeSpace(paths.root, leastFreeBytes);
-  for (const inner of [paths.logs, paths.outbox]) mkdirSync(inner, { recursive: true, mode: 0o700 });
+  for (const inner of [paths.logs, paths.outbox]) makeFolder(inner, 0o700);
   return paths;
 }
 

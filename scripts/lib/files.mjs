@@ -1,4 +1,4 @@
-import { closeSync, existsSync, fsyncSync, openSync, readFileSync, renameSync, rmSync, statfsSync, statSync, writeSync } from "node:fs";
+import { closeSync, existsSync, fsyncSync, mkdirSync, openSync, readFileSync, renameSync, rmSync, statfsSync, statSync, writeSync } from "node:fs";
 import { dirname } from "node:path";
 import { PlainError } from "./plain-error.mjs";
 
@@ -20,6 +20,17 @@ export function writeFileDurably(path, text, mode = 0o644) {
   }
   renameSync(fresh, path);
   syncFolder(dirname(path));
+}
+
+/**
+ * Makes a folder and those above it, one by one: Node's recursive mkdir calls a read-only disk "no such file".
+ * @param {string} path absolute
+ * @param {number} mode
+ */
+export function makeFolder(path, mode) {
+  if (existsSync(path)) return;
+  makeFolder(dirname(path), mode);
+  mkdirSync(path, { mode });
 }
 
 /** @param {string} path */

@@ -7,15 +7,15 @@ import { runStep, StepFailed } from "./processes.mjs";
 
 /**
  * Installs exactly what package-lock.json names, unless that is what node_modules holds already.
- * @param {{ root: string, logFile: string, signal?: AbortSignal, say: (line: string) => void }} options
+ * @param {{ root: string, logFile: string, env?: NodeJS.ProcessEnv, signal?: AbortSignal, say: (line: string) => void }} options
  */
-export async function ensureNpmPackages({ root, logFile, signal, say }) {
+export async function ensureNpmPackages({ root, logFile, env = process.env, signal, say }) {
   const stamp = join(root, "node_modules", ".saddlemark-lock");
   const lock = createHash("sha256").update(readFileSync(join(root, "package-lock.json"))).digest("hex");
   if (existsSync(stamp) && readFileSync(stamp, "utf8") === lock) return;
   if (!holdsLockedPackages(root)) {
     say("Installing the npm packages (a minute or two)");
-    await install(root, logFile, signal);
+    await install({ root, logFile, env, signal });
   }
   writeFileSync(stamp, lock);
 }
@@ -44,25 +44,24 @@ function packagesOf(path) {
   return typeof packages === "object" && packages !== null ? { ...packages } : {};
 }
 
-/**
- * @param {string} root
- * @param {string} logFile
- * @param {AbortSignal | undefined} signal
- */
-async function install(root, logFile, signal) {
+/** @param {{ root: string, logFile: string, env: NodeJS.ProcessEnv, signal?: AbortSignal }} options */
+async function install({ root, logFile, env, signal }) {
   // Development packages too, whatever NODE_ENV says: the build needs them.
   const args = ["ci", "--include=dev", "--no-fund", "--no-audit", "--fetch-retry-mintimeout=2000", "--fetch-retry-maxtimeout=10000"];
   try {
-    await runStep({ title: "npm ci", command: "npm", args, cwd: root, env: environmentForNpm(), logFile, signal });
+    await runStep({ title: "npm ci", command: "npm", args, cwd: root, env: environmentForNpm(env), logFile, signal });
   } catch (error) {
     if (!(error instanceof StepFailed)) throw error;
     throw explainNpmFailure(error, logFile);
   }
 }
 
-/** Without what an outer `npm start` set for its own run. */
-function environmentForNpm() {
-  return Object.fromEntries(Object.entries(process.env).filter(([name]) => name !== "NODE_ENV" && name !== "npm_config_omit"));
+/**
+ * Without what would leave out the packages that the build needs.
+ * @param {NodeJS.ProcessEnv} outer
+ */
+function environmentForNpm(outer) {
+  return Object.fromEntries(Object.entries(outer).filter(([name]) => name !== "NODE_ENV" && name !== "npm_config_omit"));
 }
 
 /**

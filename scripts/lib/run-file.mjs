@@ -1,15 +1,17 @@
 import { rmSync } from "node:fs";
+import { setTimeout as delay } from "node:timers/promises";
 import { readJsonObject, writeFileDurably } from "./files.mjs";
+import { takeLock } from "./lock.mjs";
 import { PlainError } from "./plain-error.mjs";
 import { findByEnvironment, signalQuietly, waitUntilGone } from "./processes.mjs";
 
 /**
  * Records what runs on a data folder, for people and for the next start.
  * @param {string} path
- * @param {{ address: string, services: import("./supervisor.mjs").RunningService[] }} run
+ * @param {{ address: string, services: import("./supervisor.mjs").RunningService[], stopping?: boolean }} run
  */
-export function writeRunFile(path, { address, services }) {
-  writeFileDurably(path, `${JSON.stringify({ pid: process.pid, address, services }, null, 2)}\n`);
+export function writeRunFile(path, { address, services, stopping = false }) {
+  writeFileDurably(path, `${JSON.stringify({ pid: process.pid, address, stopping, services }, null, 2)}\n`);
 }
 
 /** @param {string} path */
@@ -18,11 +20,27 @@ export function removeRunFile(path) {
 }
 
 /**
+ * Takes a data folder for this start; an earlier one that is about to end is waited for.
+ * @param {import("./data-folder.mjs").DataPaths} paths
+ * @returns {Promise<() => void>} how to release it
+ */
+export async function takeDataFolder(paths) {
+  const patience = { held: Date.now() + 1_500, stopping: Date.now() + 60_000 };
+  for (;;) {
+    const release = await takeLock(paths.lock);
+    if (release !== null) return release;
+    const stopping = readJsonObject(paths.run)?.stopping === true;
+    if (Date.now() > (stopping ? patience.stopping : patience.held)) throw describeHolder(paths.run, paths.root);
+    await delay(100);
+  }
+}
+
+/**
  * The line for a data folder that another start holds.
  * @param {string} path
  * @param {string} folder
  */
-export function describeHolder(path, folder) {
+function describeHolder(path, folder) {
   const run = readJsonObject(path);
   const where = typeof run?.address === "string" && typeof run.pid === "number" ? ` at ${run.address} (process ${run.pid})` : "";
   return new PlainError(`Saddlemark already runs on ${folder}${where}; stop it first or choose another folder with --data.`);

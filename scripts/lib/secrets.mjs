@@ -1,5 +1,5 @@
 import { randomBytes } from "node:crypto";
-import { chmodSync } from "node:fs";
+import { chmodSync, existsSync } from "node:fs";
 import { readJsonObject, writeFileDurably } from "./files.mjs";
 import { PlainError } from "./plain-error.mjs";
 
@@ -9,11 +9,12 @@ const names = /** @type {const} */ (["ownerPassword", "appPassword", "authPasswo
 
 /**
  * The data folder's secrets, made at random the first time; readable by the owner of the file only.
- * @param {string} path
+ * @param {import("./data-folder.mjs").DataPaths} paths
  * @returns {Secrets}
  */
-export function ensureSecrets(path) {
+export function ensureSecrets({ secrets: path, cluster }) {
   if (readJsonObject(path) === null) {
+    if (existsSync(cluster)) throw new PlainError(`${path} is gone, and without it nobody can open the database; restore it from a backup.`);
     const fresh = Object.fromEntries(names.map((name) => [name, randomBytes(32).toString("base64url")]));
     writeFileDurably(path, `${JSON.stringify(fresh, null, 2)}\n`, 0o600);
   }

@@ -2,15 +2,14 @@ import { join } from "node:path";
 import { ensureBundles } from "./bundles.mjs";
 import { prepareDataFolder, readPurpose, recordPurpose } from "./data-folder.mjs";
 import { startDatabase } from "./database.mjs";
-import { takeLock } from "./lock.mjs";
 import { ensureNpmPackages } from "./npm-packages.mjs";
 import { PlainError } from "./plain-error.mjs";
 import { findFreePort, requireFreePort } from "./ports.mjs";
 import { runStep } from "./processes.mjs";
 import { projectRoot } from "./root.mjs";
-import { describeHolder, endOrphans, removeRunFile, writeRunFile } from "./run-file.mjs";
+import { endOrphans, removeRunFile, takeDataFolder, writeRunFile } from "./run-file.mjs";
 import { ensureSecrets } from "./secrets.mjs";
-import { ownerEnvironment, serviceEnvironment } from "./service-environment.mjs";
+import { commonEnvironment, ownerEnvironment, serviceEnvironment } from "./service-environment.mjs";
 import { checkDatabaseUrl, explainConnection, withClient } from "./sql.mjs";
 import { untilStopped } from "./stop-signals.mjs";
 import { createSupervisor } from "./supervisor.mjs";
@@ -38,22 +37,37 @@ import { ensureWebBuild, nextProgram } from "./web-build.mjs";
 export async function startApplication(options, stop, say) {
   const paths = prepareDataFolder(options.dataFolder);
   checkPurpose(paths, options);
-  const release = await takeLock(paths.lock);
-  if (release === null) throw describeHolder(paths.run, paths.root);
+  const release = await takeDataFolder(paths);
   const supervisor = createSupervisor(stop.abort);
   stop.onImpatience(supervisor.hurry);
   try {
-    const stage = { options, paths, secrets: ensureSecrets(paths.secrets), supervisor, signal: stop.signal, say };
+    const stage = { options, paths, secrets: ensureSecrets(paths), supervisor, signal: stop.signal, say };
     await clearTheWay(stage);
     const ownerUrl = await prepareDatabase(stage);
     await prepareBuild(stage);
     await serve(stage, ownerUrl);
     await untilStopped(stop.signal);
   } finally {
-    if (supervisor.list().length > 0) say("Stopping");
+    await end(options, paths, supervisor, say);
+    release();
+  }
+}
+
+/**
+ * @param {StartOptions} options
+ * @param {import("./data-folder.mjs").DataPaths} paths
+ * @param {ReturnType<typeof createSupervisor>} supervisor
+ * @param {(line: string) => void} say
+ */
+async function end(options, paths, supervisor, say) {
+  const services = supervisor.list();
+  if (services.length > 0) say("Stopping");
+  try {
+    writeRunFile(paths.run, { address: addressOf(options), services, stopping: true });
+  } finally {
+    // On a full disk too, where the note above fails.
     await supervisor.stopAll();
     removeRunFile(paths.run);
-    release();
   }
 }
 
@@ -71,7 +85,9 @@ async function clearTheWay({ options, paths, secrets, supervisor, signal, say })
   writeRunFile(paths.run, { address: addressOf(options), services: supervisor.list() });
   await endOrphans(secrets.runToken);
   await requireFreePort(options.port);
-  await ensureNpmPackages({ root: projectRoot, logFile: join(paths.logs, "npm.log"), signal, say });
+  // The run token lets the next start end an installation or a build that outlived a killed one.
+  const env = { ...process.env, SADDLEMARK_RUN_TOKEN: secrets.runToken };
+  await ensureNpmPackages({ root: projectRoot, logFile: join(paths.logs, "npm.log"), env, signal, say });
 }
 
 /**
@@ -85,10 +101,11 @@ async function prepareDatabase(stage) {
   const env = ownerEnvironment({ outer: process.env, ownerUrl, secrets, paths });
   const step = { command: process.execPath, cwd: projectRoot, env, signal };
   await runStep({ ...step, title: "The migration", args: ["dist/migrate.mjs"], logFile: join(paths.logs, "migrate.log") });
-  const demonstration = readPurpose(paths) === null ? options.demonstration : readPurpose(paths) === "demonstration";
+  const purpose = readPurpose(paths);
+  const demonstration = purpose === null ? options.demonstration : purpose === "demonstration";
   recordPurpose(paths, demonstration ? "demonstration" : "real");
   if (demonstration) {
-    say("Checking the demonstration data");
+    if (purpose === null) say("Making the demonstration data");
     await runStep({ ...step, title: "Seeding the demonstration", args: ["dist/seed.mjs"], logFile: join(paths.logs, "seed.log") });
   }
   return ownerUrl;
@@ -110,9 +127,10 @@ async function connectOrStart({ paths, secrets, supervisor, signal, say }) {
 }
 
 /** @param {Stage} stage */
-async function prepareBuild({ options, paths, signal, say }) {
+async function prepareBuild({ options, paths, secrets, signal, say }) {
   if (options.development) return;
-  await ensureWebBuild({ root: projectRoot, logFile: join(paths.logs, "build.log"), signal, say });
+  const env = commonEnvironment(process.env, secrets);
+  await ensureWebBuild({ root: projectRoot, logFile: join(paths.logs, "build.log"), env, signal, say });
 }
 
 /**

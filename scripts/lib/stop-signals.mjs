@@ -15,6 +15,7 @@ export function listenForStop() {
       else if (Date.now() - firstAt > 1_000) impatience();
     });
   }
+  if (process.env.npm_lifecycle_event !== undefined) watchParent(controller);
   let firstAt = 0;
   controller.signal.addEventListener("abort", () => {
     firstAt = Date.now();
@@ -26,6 +27,18 @@ export function listenForStop() {
       impatience = work;
     },
   };
+}
+
+/**
+ * Started by npm, the end of npm (kill -9 too) is the end of the run: nobody else could stop it any more.
+ * @param {AbortController} controller
+ */
+function watchParent(controller) {
+  const parent = process.ppid;
+  const timer = setInterval(() => {
+    if (process.ppid !== parent && !controller.signal.aborted) controller.abort(new StopRequested());
+  }, 250);
+  timer.unref();
 }
 
 /**

@@ -12,9 +12,9 @@ const sources = [
 
 /**
  * Builds the web application unless the build there is of these sources.
- * @param {{ root: string, logFile: string, signal?: AbortSignal, say: (line: string) => void }} options
+ * @param {{ root: string, logFile: string, env: NodeJS.ProcessEnv, signal?: AbortSignal, say: (line: string) => void }} options
  */
-export async function ensureWebBuild({ root, logFile, signal, say }) {
+export async function ensureWebBuild({ root, logFile, env, signal, say }) {
   // Two starts on different data folders share one build.
   const release = await takeLock(join(root, "node_modules", ".saddlemark-build.lock"), { wait: true });
   try {
@@ -25,26 +25,22 @@ export async function ensureWebBuild({ root, logFile, signal, say }) {
     if (existsSync(stamp) && readFileSync(stamp, "utf8") === wanted()) return;
     say("Building the web application (one to three minutes)");
     rmSync(stamp, { force: true });
-    await build(root, logFile, signal);
+    await build({ root, logFile, env, signal });
     writeFileSync(stamp, wanted());
   } finally {
     release?.();
   }
 }
 
-/**
- * @param {string} root
- * @param {string} logFile
- * @param {AbortSignal | undefined} signal
- */
-async function build(root, logFile, signal) {
+/** @param {{ root: string, logFile: string, env: NodeJS.ProcessEnv, signal?: AbortSignal }} options */
+async function build({ root, logFile, env, signal }) {
   try {
     await runStep({
       title: "Building the web application",
       command: process.execPath,
       args: [nextProgram(root), "build"],
       cwd: root,
-      env: { ...process.env, NODE_ENV: "production", NEXT_TELEMETRY_DISABLED: "1" },
+      env: { ...env, NODE_ENV: "production", NEXT_TELEMETRY_DISABLED: "1" },
       logFile,
       signal,
     });
