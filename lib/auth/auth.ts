@@ -36,6 +36,7 @@ function createAuth(settings: AuthSettings) {
     trustedOrigins: settings.trustedOrigins,
     telemetry: { enabled: false },
     logger: { level: "warn", log: logUnlessExpected },
+    onAPIError: { onError: logFault },
     database: drizzleAdapter(authDatabase(), { provider: "pg", schema }),
     session: { expiresIn: 30 * daySeconds, updateAge: daySeconds },
     advanced: { cookiePrefix: "saddlemark", useSecureCookies: settings.secure, ipAddress: { ipAddressHeaders: ["x-forwarded-for"] } },
@@ -102,6 +103,12 @@ function attemptOf(context: { path?: string; body?: unknown; headers?: Headers }
 }
 
 const expectedMessages = [/^Failed to validate API key/, /^User not found/, /^Invalid password/, /^Reset Password: User not found/, /^Sign-up attempt/];
+
+/** A refusal is an answer; only faults of our own are worth a line. */
+function logFault(error: unknown): void {
+  if (isAPIError(error) && error.statusCode < 500) return;
+  console.error("auth:", error instanceof Error ? error.message : "unknown fault");
+}
 
 /** Wrong passwords and bad keys are everyday answers, not events for the log. */
 function logUnlessExpected(level: string, message: string, ...details: unknown[]): void {
