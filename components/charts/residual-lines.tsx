@@ -13,7 +13,7 @@ export function ResidualLines({ history, tolerance }: { history: readonly Residu
       <LineChart data={data} margin={{ top: 8, right: 14, bottom: 4, left: 8 }} accessibilityLayer={false}>
         <CartesianGrid stroke="var(--hairline)" />
         <XAxis dataKey="iteration" type="number" domain={["dataMin", "dataMax"]} tick={tickStyle} stroke="var(--contour)" allowDecimals={false} />
-        <YAxis type="number" scale="log" domain={[decades.at(0) ?? 1e-10, decades.at(-1) ?? 1]} ticks={decades} allowDataOverflow tickFormatter={formatPowerOfTen} tick={tickStyle} stroke="var(--contour)" width={64} />
+        <YAxis type="number" scale="log" domain={[decades.at(0) ?? 1e-10, decades.at(-1) ?? 1]} ticks={decades} interval={0} allowDataOverflow tickFormatter={formatPowerOfTen} tick={tickStyle} stroke="var(--contour)" width={64} />
         <Tooltip formatter={(value) => formatNumber(typeof value === "number" ? value : null)} labelFormatter={(label) => `Iteration ${String(label)}`} contentStyle={tooltipStyle} isAnimationActive={false} />
         {tolerance !== undefined && <ReferenceLine y={tolerance} stroke="var(--bad)" strokeDasharray="5 3" />}
         <Line name="monitored" dataKey="monitored" stroke="var(--water)" strokeWidth={2} dot={false} isAnimationActive={false} />
