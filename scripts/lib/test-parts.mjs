@@ -1,5 +1,5 @@
 import { spawn } from "node:child_process";
-import { existsSync } from "node:fs";
+import { existsSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { runApplication } from "./application.mjs";
 import { prepareDataFolder } from "./data-folder.mjs";
@@ -64,7 +64,11 @@ export async function runBrowserPart(run) {
   if (!existsSync(chromium)) {
     await installDebianPackages({ names: ["chromium"], purpose: "Chromium", logFile: join(folder, "apt.log"), signal, say });
   }
-  const application = await runApplication({ dataFolder: join(folder, "application"), logFile: join(folder, "start.log"), signal });
+  const dataFolder = join(folder, "application");
+  const application = await runApplication({ dataFolder, logFile: join(folder, "start.log"), signal }).catch((error) => {
+    showLogs(join(dataFolder, "logs"), say);
+    throw error;
+  });
   try {
     const report = join(folder, "playwright.json");
     const env = {
@@ -75,9 +79,25 @@ export async function runBrowserPart(run) {
       OUTBOX_DIR: application.paths.outbox,
     };
     const exitedWell = await runTool(run, ["node_modules/@playwright/test/cli.js", "test", "--reporter=line,json"], env);
-    return countPlaywright(readReport(report), { name: "The browser tests", exitedWell });
+    const count = countPlaywright(readReport(report), { name: "The browser tests", exitedWell });
+    if (count.failed > 0) showLogs(application.paths.logs, say);
+    return count;
   } finally {
     await application.stop();
+  }
+}
+
+/**
+ * The ends of the application's logs, which go with the throw-away folder.
+ * @param {string} folder
+ * @param {(line: string) => void} say
+ */
+function showLogs(folder, say) {
+  for (const name of ["migrate.log", "seed.log", "build.log", "worker.log", "web.log"]) {
+    const path = join(folder, name);
+    if (!existsSync(path)) continue;
+    say(`\n--- end of ${name}`);
+    say(readFileSync(path, "utf8").trimEnd().split("\n").slice(-30).join("\n"));
   }
 }
 

@@ -1,43 +1,58 @@
 import { randomBytes } from "node:crypto";
 import pg from "pg";
-import { z } from "zod";
+import { grantStatements } from "@/db/grants";
 
-export type TestDatabase = { ownerUrl: string; appUrl: string; authUrl: string; drop: () => Promise<void> };
+export type TestDatabase = {
+  /** The owner: makes and drops, is not bound by row-level security. */
+  ownerUrl: string;
+  /** The application's role, bound by row-level security. */
+  appUrl: string;
+  /** The role of sign-in and of the worker's queue. */
+  authUrl: string;
+  drop: () => Promise<void>;
+};
 
-const environmentSchema = z.object({
-  TEST_DATABASE_ADMIN_URL: z.string().min(1),
-  TEST_DATABASE_TEMPLATE: z.string().min(1),
-  TEST_DATABASE_APP_PASSWORD: z.string().min(1),
-  TEST_DATABASE_AUTH_PASSWORD: z.string().min(1),
-});
-
-/** A database of its own for one test file, cloned from the migrated template. */
+/** A database of its own for a test file: a clone of the migrated template, dropped with `drop()` in afterAll. */
 export async function createTestDatabase(): Promise<TestDatabase> {
-  const environment = environmentSchema.parse(process.env);
-  const adminUrl = environment.TEST_DATABASE_ADMIN_URL;
-  const name = `saddlemark_test_${randomBytes(6).toString("hex")}`;
-  await run(adminUrl, `create database ${name} template ${environment.TEST_DATABASE_TEMPLATE}`);
-  // Privileges on the database itself are not cloned.
-  await run(adminUrl, `revoke create, temporary on database ${name} from public`);
-  const urlOf = (user?: string, password?: string) => {
-    const url = new URL(adminUrl);
-    url.pathname = `/${name}`;
-    if (user !== undefined && password !== undefined) Object.assign(url, { username: user, password });
-    return url.href;
-  };
+  const adminUrl = required("TEST_DATABASE_ADMIN_URL");
+  const prefix = required("TEST_DATABASE_PREFIX");
+  const name = `${prefix}_${randomBytes(6).toString("hex")}`;
+  await run(adminUrl, [`create database ${name} template ${prefix}_template`]);
+  const ownerUrl = databaseUrl(adminUrl, name);
+  // Privileges on the database itself are not part of a template.
+  await run(ownerUrl, grantStatements(name));
   return {
-    ownerUrl: urlOf(),
-    appUrl: urlOf("saddlemark_app", environment.TEST_DATABASE_APP_PASSWORD),
-    authUrl: urlOf("saddlemark_auth", environment.TEST_DATABASE_AUTH_PASSWORD),
-    drop: () => run(adminUrl, `drop database if exists ${name} with (force)`),
+    ownerUrl,
+    appUrl: roleUrl(ownerUrl, "saddlemark_app", required("TEST_DATABASE_APP_PASSWORD")),
+    authUrl: roleUrl(ownerUrl, "saddlemark_auth", required("TEST_DATABASE_AUTH_PASSWORD")),
+    drop: () => run(adminUrl, [`drop database if exists ${name} with (force)`]),
   };
 }
 
-async function run(url: string, statement: string): Promise<void> {
+function required(variable: string): string {
+  const value = process.env[variable];
+  if (!value) throw new Error(`${variable} is not set: database tests belong to vitest's project "database".`);
+  return value;
+}
+
+function databaseUrl(url: string, name: string): string {
+  const changed = new URL(url);
+  changed.pathname = `/${name}`;
+  return changed.href;
+}
+
+function roleUrl(url: string, role: string, password: string): string {
+  const changed = new URL(url);
+  changed.username = role;
+  changed.password = password;
+  return changed.href;
+}
+
+async function run(url: string, statements: readonly string[]): Promise<void> {
   const client = new pg.Client({ connectionString: url });
   await client.connect();
   try {
-    await client.query(statement);
+    for (const statement of statements) await client.query(statement);
   } finally {
     await client.end();
   }
