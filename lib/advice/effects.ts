@@ -55,12 +55,18 @@ function apply(effects: RuleEffects, rule: FiredRule["rule"], effect: FiredRule[
       addOnce(effect.strategy === null ? effects.cautions : effects.strategies[effect.strategy].cautions, effect.text);
       return;
     case "fallback":
-      effects.strategies[effect.strategy].fallback = { strategy: effect.to, when: effect.when };
+      effects.strategies[effect.strategy].fallback = { strategy: effect.to, when: sentence(effect.when) };
   }
 }
 
 function factorOf(rule: FiredRule["rule"], factor: number): Factor {
   return { kind: "rule", rule: rule.id, factor, text: `${rule.title}. ${rule.rationale}`, source: rule.source };
+}
+
+/** Rules say when as a clause, definitions as a sentence; advice shows sentences. */
+function sentence(clause: string): string {
+  const text = clause.charAt(0).toUpperCase() + clause.slice(1);
+  return /[.?]$/.test(text) ? text : `${text}.`;
 }
 
 function addOnce(texts: string[], text: string): void {

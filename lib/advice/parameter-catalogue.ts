@@ -1,4 +1,4 @@
-import { strategies } from "@/lib/strategies";
+import { strategies } from "@/lib/strategies/index";
 import type { ParameterCatalogue } from "@/rules/validate-rule-set";
 import { byStrategy } from "./evidence";
 

@@ -2,7 +2,7 @@ import { estimateAll } from "@/lib/estimates/estimate-all";
 import { modelVersion } from "@/lib/estimates/model-version";
 import type { Answers } from "@/lib/questionnaire/answers";
 import { computeSizes } from "@/lib/sizes/compute-sizes";
-import { strategies } from "@/lib/strategies";
+import { strategies } from "@/lib/strategies/index";
 import { fireRules } from "@/rules/engine";
 import { parseFacts } from "@/rules/facts";
 import type { RuleSet } from "@/rules/rule-schema";
@@ -51,5 +51,5 @@ export async function computeAdvice({ answers, ruleSet, editionNumber, evidence,
 
 function lineCautions(ranking: readonly RankingEntry[]): string[] {
   if (ranking.some(({ status }) => status === "ranked")) return [];
-  return ["No strategy may compete on this machine with this program: each stands below with its reason. More memory, or more of what the program supplies, would change that."];
+  return ["No strategy may compete: each stands below with its reason. More memory, more of what the program supplies, or another rule would change that."];
 }

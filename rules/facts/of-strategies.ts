@@ -83,7 +83,7 @@ export const strategyFacts: readonly FactDefinition[] = strategyIds.flatMap((str
   strategyFactSuffixes.map(({ suffix, label, plural, unit, group, whole, description }) =>
     numberFact({
       name: strategyFactName(strategy, suffix),
-      label: `${label} of ${strategy}`,
+      label: `${strategy}'s ${label}`,
       plural,
       unit,
       group,

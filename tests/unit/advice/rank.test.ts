@@ -123,7 +123,7 @@ describe("the ranking", () => {
     const estimates = estimatesWith({ bddc: { ...estimateOf(1), parameters: { levels: 1, scaling: "deluxe" } } });
     const entry = entryOf(rank({ estimates, effects: effectsOf([set(2), fall("direct-blr")], [set(3), fall("direct-ldlt")]) }), "bddc");
     expect(entry.parameters).toEqual({ levels: 3, scaling: "deluxe" });
-    expect(entry.fallback).toEqual({ strategy: "direct-ldlt", when: "it fails" });
+    expect(entry.fallback).toEqual({ strategy: "direct-ldlt", when: "It fails." });
   });
 
   it("falls back only on what may compete: along the definitions, else on the best other", () => {

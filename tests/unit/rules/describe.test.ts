@@ -27,7 +27,7 @@ describe("rules in words", () => {
       "none of (degree is 1; cores are 1)",
       { not: { any: [{ fact: "degree", operator: "equal", value: 1 }, { fact: "cores", operator: "equal", value: 1 }] } },
     ],
-    ["predicted iterations of schur-diag-amg are more than 200", { fact: "schurDiagAmgIterations", operator: "greaterThan", value: 200 }],
+    ["schur-diag-amg's predicted iterations are more than 200", { fact: "schurDiagAmgIterations", operator: "greaterThan", value: 200 }],
   ])("say %s", (words, condition) => {
     expect(describeCondition(condition)).toBe(words);
   });
