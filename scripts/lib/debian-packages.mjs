@@ -59,7 +59,7 @@ async function apt(args, logFile, signal) {
 export function explainAptFailure(failure, names, logFile) {
   const { output } = failure;
   const what = `apt-get install ${names.join(" ")} failed`;
-  if (/no space left|not enough free (disk )?space/i.test(output)) return new PlainError(`${what}: the system disk is full.`);
+  if (/no space left|(n't have|not) enough free (disk )?space/i.test(output)) return new PlainError(`${what}: the system disk is full.`);
   if (/read-only file system/i.test(output)) return new PlainError(`${what}: the system disk is read-only.`);
   if (/could not get lock|unable to (acquire|lock)/i.test(output)) return new PlainError(`${what}: another package installation is running. Start again when it has ended.`);
   if (/(temporary failure|could not) resol|could not connect|network is unreachable|connection (failed|timed out|refused)|failed to fetch|unable to locate/i.test(output)) {

@@ -1,6 +1,5 @@
 import { randomBytes } from "node:crypto";
 import pg from "pg";
-import { grantStatements } from "@/db/grants";
 
 export type TestDatabase = {
   /** The owner: makes and drops, is not bound by row-level security. */
@@ -17,10 +16,9 @@ export async function createTestDatabase(): Promise<TestDatabase> {
   const adminUrl = required("TEST_DATABASE_ADMIN_URL");
   const prefix = required("TEST_DATABASE_PREFIX");
   const name = `${prefix}_${randomBytes(6).toString("hex")}`;
-  await run(adminUrl, [`create database ${name} template ${prefix}_template`]);
-  const ownerUrl = databaseUrl(adminUrl, name);
   // Privileges on the database itself are not part of a template.
-  await run(ownerUrl, grantStatements(name));
+  await run(adminUrl, [`create database ${name} template ${prefix}_template`, `revoke create, temporary on database ${name} from public`]);
+  const ownerUrl = databaseUrl(adminUrl, name);
   return {
     ownerUrl,
     appUrl: roleUrl(ownerUrl, "saddlemark_app", required("TEST_DATABASE_APP_PASSWORD")),
