@@ -42,7 +42,7 @@ describe("advice for any valid questionnaire", () => {
         expect(advice.ranking.filter((entry) => !isWhole(entry))).toEqual([]);
         const ranked = advice.ranking.filter(({ status }) => status === "ranked").length;
         expect(advice.ranking.slice(0, ranked).every(({ status }) => status === "ranked")).toBe(true);
-        expect(adviceSchema.parse(advice)).toEqual(advice);
+        expect(adviceSchema.safeParse(advice).success).toBe(true);
         expect(JSON.stringify(await advise(structuredClone(answers)))).toBe(JSON.stringify(advice));
       }),
       { seed: 20_266, numRuns: 2000 },
