@@ -1,0 +1,62 @@
+import { z } from "zod";
+import { findCase, listCaseAdvice } from "@/db/queries/cases";
+import { withTeam, type TeamDatabase } from "@/db/scope";
+import { caseRefSchema } from "@/lib/api/contract/common";
+import { defineUseCase, type Scope } from "@/lib/auth/guard";
+import { readAuthSettings } from "@/lib/auth/settings";
+import { batchScript } from "@/lib/runs/batch-script";
+import { AppError } from "@/lib/shared/app-error";
+import { strategyIdSchema, type StrategyId } from "@/lib/shared/strategy-ids";
+import { strategies } from "@/lib/strategies";
+import type { OptionsFile } from "@/lib/strategies/strategy";
+import { caseNotFound, caseRefOf } from "@/lib/use-cases/shared/case-ref";
+
+export type TextFile = { filename: string; text: string };
+
+const input = z.strictObject({ caseRef: caseRefSchema, strategy: strategyIdSchema });
+
+/** The options file of one strategy with the parameters of the latest advice; where options can't express it, the reason and the recipe. */
+export const readOptionsFile = defineUseCase({
+  permission: "cases:read",
+  input,
+  run: ({ scope }, { caseRef, strategy }): Promise<TextFile> =>
+    withTeam(scope, async (db) => {
+      const { number, file, recipe } = await renderStrategy(db, scope, caseRef, strategy);
+      if (file.kind === "petsc") return { filename: file.filename, text: file.text };
+      const steps = recipe.map((step, index) => `${index + 1}. ${step}`);
+      return { filename: `case-${number}-${strategy}.txt`, text: [`Recipe only: ${file.reason}`, "", ...steps, ""].join("\n") };
+    }),
+});
+
+/** A batch script that runs one strategy on the case's hardware and reports the run. */
+export const readBatchScript = defineUseCase({
+  permission: "cases:read",
+  input,
+  run: ({ scope }, { caseRef, strategy }): Promise<TextFile> =>
+    withTeam(scope, async (db) => {
+      const { number, answers, entry, file } = await renderStrategy(db, scope, caseRef, strategy);
+      const text = batchScript({
+        caseNumber: number,
+        strategy,
+        hardware: answers.hardware,
+        totalSecondsHigh: entry.estimate.totalSeconds.high,
+        options: file.kind === "petsc" ? { filename: file.filename, text: file.text } : null,
+        baseUrl: readAuthSettings().baseUrl,
+      });
+      return { filename: `case-${number}-${strategy}.sh`, text };
+    }),
+});
+
+async function renderStrategy(db: TeamDatabase, scope: Scope, caseRef: string, strategy: StrategyId) {
+  const found = await findCase(db, scope, caseRefOf(caseRef));
+  if (found === null) throw caseNotFound();
+  const [latest] = await listCaseAdvice(db, scope, found.id, 1);
+  const entry = latest?.content.ranking.find((ranked) => ranked.strategy === strategy);
+  if (latest === undefined || entry === undefined) throw new AppError("not-found", "The latest advice does not speak of this strategy.");
+  const { answers, number } = found;
+  const { estimate, parameters } = entry;
+  const context = { answers, sizes: latest.content.sizes, parameters, iterationsHigh: estimate.iterations.high, memoryGiBHigh: estimate.memoryGiB.high };
+  const definition = strategies[strategy];
+  const file: OptionsFile = definition.options(context);
+  return { number, answers, entry, file, recipe: definition.recipe(context) };
+}
