@@ -55,7 +55,7 @@ function reportAll(assembly: Assembly): void {
     problems.add("note", solve?.line ?? null, `The log holds ${result.solves} solves; the last complete one is reported.`);
   }
   if (solve !== null && solve !== program.tracker.lastComplete) {
-    problems.add("warning", solve.last?.line ?? solve.line, "The log ends before the solve does, or says nothing of how it ended. Add -ksp_converged_reason.");
+    problems.add("warning", solve.lastLine, "The log ends before the solve does, or says nothing of how it ended. Add -ksp_converged_reason.");
   } else if (program.tracker.current !== solve && program.tracker.current !== null) {
     problems.add("warning", program.tracker.current.line, "A later solve is not complete; the last complete one is reported.");
   }

@@ -11,7 +11,7 @@ export function assembleOutcome(assembly: Assembly): void {
   const failure = program.failure.failure();
   if (solve?.reason) reportReason(assembly);
   else if (solve?.ended === true && solve.last !== null && solve.brokenAt === null) {
-    setValue(assembly, "iterations", solve.last.iteration, solve.last.line);
+    setValue(assembly, "iterations", solve.last.iteration, solve.lastLine);
   }
   if (failure === null) return;
   const completed = program.tracker.lastComplete?.reason != null;

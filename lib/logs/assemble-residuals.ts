@@ -55,7 +55,7 @@ function reportMonitored(assembly: Assembly): void {
     return;
   }
   const ratio = solve.last.monitored / solve.first;
-  if (Number.isFinite(ratio)) setValue(assembly, "monitoredRelativeResidual", ratio, solve.last.line);
+  if (Number.isFinite(ratio)) setValue(assembly, "monitoredRelativeResidual", ratio, solve.lastLine);
 }
 
 /** The program's own statement of |b - Kx| / |b| if there is one, else that of the last monitor line. */
@@ -69,7 +69,7 @@ function reportTrue(assembly: Assembly, whole: boolean): void {
     return;
   }
   if (stated.value === null) {
-    if (Number.isFinite(monitored)) setValue(assembly, "trueRelativeResidual", monitored, solve.last?.line ?? null);
+    if (Number.isFinite(monitored)) setValue(assembly, "trueRelativeResidual", monitored, solve.lastLine);
     return;
   }
   if (!Number.isFinite(stated.value)) {

@@ -1,28 +1,35 @@
-/** A value the log states, with the line that stated it first; two different statements cancel each other. */
-export type Claim<T> = {
-  state(value: T, line: number): void;
-  readonly value: T | null;
-  readonly line: number | null;
-  /** Line of the statement that contradicts the first one, else null. */
-  readonly contradictedAt: number | null;
-};
+/**
+ * A value the log states, with the line that stated it first; two different statements cancel each other. A class,
+ * because a long log makes many: methods on the prototype keep them small.
+ */
+export class Claim<T> {
+  private first: T | null = null;
+  private firstLine: number | null = null;
+  private contradiction: number | null = null;
 
-export function createClaim<T>(same: (a: T, b: T) => boolean = Object.is): Claim<T> {
-  let first: { value: T; line: number } | null = null;
-  let contradictedAt: number | null = null;
-  return {
-    state(value, line) {
-      if (first === null) first = { value, line };
-      else if (contradictedAt === null && !same(first.value, value)) contradictedAt = line;
-    },
-    get value() {
-      return first === null || contradictedAt !== null ? null : first.value;
-    },
-    get line() {
-      return first === null ? null : first.line;
-    },
-    get contradictedAt() {
-      return contradictedAt;
-    },
-  };
+  state(value: T, line: number): void {
+    if (this.firstLine === null) {
+      this.first = value;
+      this.firstLine = line;
+    } else if (this.contradiction === null && !Object.is(this.first, value)) this.contradiction = line;
+  }
+
+  /** The value, null when nothing or two things were stated. */
+  get value(): T | null {
+    return this.contradiction === null ? this.first : null;
+  }
+
+  /** Line of the first statement. */
+  get line(): number | null {
+    return this.firstLine;
+  }
+
+  /** Line of the statement that contradicts the first one, else null. */
+  get contradictedAt(): number | null {
+    return this.contradiction;
+  }
+}
+
+export function createClaim<T>(): Claim<T> {
+  return new Claim<T>();
 }

@@ -1,3 +1,4 @@
+import { keepString } from "@/lib/logs/keep-string";
 import type { Outcome } from "@/lib/runs/run";
 
 /** What a reason says about the run: `fixed` ran a set number of iterations without a test; `other` none of ours. */
@@ -49,7 +50,7 @@ export function readReasonLine(text: string): ReasonLine | null {
   const match = pattern.exec(text.trimEnd());
   if (match === null) return null;
   const [, indent = "", prefix = "", verb, name = "", iterations] = match;
-  return { name, converged: verb === "converged", iterations: Number(iterations), prefix, level: Math.floor(indent.length / 2) };
+  return { name: keepString(name), converged: verb === "converged", iterations: Number(iterations), prefix: keepString(prefix), level: Math.floor(indent.length / 2) };
 }
 
 /** Prefixes that PETSc gives to solvers inside another one, whatever the indentation says. */

@@ -1,3 +1,4 @@
+import { keepString } from "@/lib/logs/keep-string";
 import type { Outcome } from "@/lib/runs/run";
 
 /** Why a program ended otherwise than by a linear solve's own verdict. `outcome` null: the cause is left open. */
@@ -11,6 +12,9 @@ const signs: readonly Sign[] = [
   { pattern: /\boom[-_ ]kill|\bOut Of Memory\b.*\bkill|\bOUT_OF_MEMORY\b|\bExceeded job memory limit\b|TERM_MEMLIMIT/i, outcome: "out-of-memory", reason: "MEMORY_LIMIT", text: "The batch system or the kernel ended the job for want of memory." },
   { pattern: /\bstd::bad_alloc\b|\bCannot allocate memory\b/i, outcome: "out-of-memory", reason: "ALLOCATION_FAILED", text: "An allocation failed." },
 ];
+
+/** Cheap test before the signs are tried one by one. */
+const anySign = /TIME|time|memory|Memory|MEM|OUT_OF|oom|OOM|bad_alloc|walltime/;
 
 const kinds: Record<string, { outcome: Outcome | null; text: string }> = {
   "Out of memory": { outcome: "out-of-memory", text: "PETSc could not allocate memory." },
@@ -38,12 +42,12 @@ export function createFailureReader() {
   function readPetsc(message: string, line: number, isBanner: boolean): void {
     if (isBanner) banner ??= line;
     if (/^-+ ?Error Message|^-{10,}|^See https?:|^Configure options|^Petsc (?:Release|Development)|^\S+ on a \S* ?named /.test(message) || message === "") return;
-    if (/^Caught signal number/.test(message)) signalled ??= { text: message.slice(0, 200), line };
+    if (/^Caught signal number/.test(message)) signalled ??= { text: keepString(message.slice(0, 200)), line };
     const code = /INFOG?\(1\)= ?(-?\d{1,9})(?:, INFOG?\(2\)= ?(-?\d{1,18}))?$/.exec(message);
     if (code !== null && mumpsCode.length < 20) {
       mumpsCode.push({ code: Number(code[1]), detail: code[2] === undefined ? null : Number(code[2]), line });
     }
-    if (!isFrame(message) && messages.length < 12) messages.push({ text: message.slice(0, 300), line });
+    if (!isFrame(message) && messages.length < 12) messages.push({ text: keepString(message.slice(0, 300)), line });
   }
 
   return {
@@ -63,7 +67,7 @@ export function createFailureReader() {
         banner ??= line;
         return true;
       }
-      if (batch !== null) return false;
+      if (batch !== null || text.length > 600 || !anySign.test(text)) return false;
       const sign = signs.find(({ pattern }) => pattern.test(text));
       if (sign !== undefined) batch = { outcome: sign.outcome, line, reason: sign.reason, text: sign.text };
       return sign !== undefined;

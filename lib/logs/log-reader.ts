@@ -4,6 +4,7 @@ import { createLineSplitter } from "@/lib/logs/line-splitter";
 import { readMonitorLine } from "@/lib/logs/monitor-line";
 import { emptyParsedLog, type ParsedLog } from "@/lib/logs/parsed-log";
 import { createProblemList } from "@/lib/logs/problem-list";
+import { createHistoryPool } from "@/lib/logs/residual-history";
 import { createProgramRecord, type ProgramRecord } from "@/lib/logs/program-record";
 
 export type LogReaderOptions = {
@@ -125,17 +126,21 @@ function continuesNumber(line: string, next: string, longest: number): boolean {
 
 /** The programs of a log in order; only the one being read and the last with a complete solve are kept. */
 function createProgramQueue(historyLimit: number) {
-  let current = createProgramRecord(historyLimit, 1);
+  const histories = createHistoryPool(historyLimit);
+  let current = createProgramRecord(histories, 1);
   let best: ProgramRecord | null = null;
   let solvesBefore = 0;
   let solvesOpen = false;
 
   function next(line: number): void {
     current.finish();
-    if (current.tracker.lastComplete !== null) best = current;
+    if (current.tracker.lastComplete !== null) {
+      if (best?.tracker.lastComplete) histories.giveBack(best.tracker.lastComplete.history);
+      best = current;
+    }
     solvesBefore += current.tracker.completed;
     solvesOpen = solvesOpen || current.tracker.mixedAt !== null;
-    current = createProgramRecord(historyLimit, line);
+    current = createProgramRecord(histories, line);
   }
 
   return {

@@ -1,3 +1,5 @@
+import { keepString } from "@/lib/logs/keep-string";
+
 /** Statistics MUMPS prints itself (ICNTL(4) >= 2), by name such as `INFOG(29)`; each factorisation adds its own value. */
 export type MumpsReader = {
   /** Takes a line when it is one of MUMPS' own; false otherwise. */
@@ -12,6 +14,8 @@ export type MumpsReader = {
 const statistic = /^(?:-+ *|\*\* )?(?:.{0,60}\()?(RINFOG|INFOG|ICNTL)? ?\((\d{1,2})\)[^=:]{0,60}(?:=|\)?:) *(-?\d+(?:\.\d+)?(?:[DE][+-]\d{2,3})?)$/;
 const returned = /^On return from [SDCZ]MUMPS, INFOG\(([12])\)= *(-?\d{1,18})$/;
 const entering = /^Entering [SDCZ]MUMPS (\d+\.\d+(?:\.\d+)?\w{0,10}) from /;
+/** First characters of MUMPS' lines: E, I, O, R, -, *. */
+const opensWith = new Set([69, 73, 79, 82, 45, 42]);
 /** Names that stand for the same thing when printed without `INFOG`. */
 const wanted = new Set(["RINFOG(1)", "RINFOG(3)", "INFOG(1)", "INFOG(2)", "INFOG(13)", "INFOG(20)", "INFOG(22)", "INFOG(29)", "ICNTL(35)"]);
 
@@ -22,15 +26,16 @@ export function createMumpsReader(): MumpsReader {
 
   function state(name: string, value: number, line: number): void {
     const known = values.get(name);
-    if (known === undefined) values.set(name, { value, line, distinct: 1 });
+    if (known === undefined) values.set(keepString(name), { value, line, distinct: 1 });
     else if (known.value !== value) known.distinct += 1;
   }
 
   return {
     take(text, line) {
+      if (text.length > 200 || !text.includes("(") || !opensWith.has(text.charCodeAt(0))) return false;
       const entered = entering.exec(text);
       if (entered !== null) {
-        version = entered[1] ?? null;
+        version = entered[1] === undefined ? null : keepString(entered[1]);
         return true;
       }
       const end = returned.exec(text);

@@ -1,3 +1,5 @@
+import { keepString } from "@/lib/logs/keep-string";
+
 const optionLimit = 400;
 
 export type LoggedOption = { name: string; value: string | null };
@@ -12,6 +14,9 @@ export function createOptionReader() {
   return {
     /** Takes a line of the table or of the list; false for all other lines. */
     take(text: string, line: number): boolean {
+      const first = text.charCodeAt(0);
+      // Number sign, hyphen, E, O, P, T open its lines.
+      if (first !== 35 && first !== 45 && first !== 69 && first !== 79 && first !== 80 && first !== 84 && !inTable) return false;
       if (/^#?PETSc Option Table entries:/.test(text)) {
         inTable = true;
         return true;
@@ -22,7 +27,7 @@ export function createOptionReader() {
       }
       const left = /^Option left: name:(-\S{1,200})(?: (?:value: (.{0,300}?)|\(?no value\)?))?(?: source: .*)?$/.exec(text.trimEnd());
       if (left?.[1] !== undefined) {
-        if (unused.size < optionLimit && !unused.has(left[1])) unused.set(left[1], { value: left[2] ?? null, line });
+        if (unused.size < optionLimit && !unused.has(left[1])) unused.set(keepString(left[1]), { value: keep(left[2]), line });
         return true;
       }
       const several = /^There (?:are (\d{1,6}) unused database options|is one unused database option)\b/.exec(text);
@@ -33,7 +38,7 @@ export function createOptionReader() {
       if (!inTable) return false;
       const entry = /^(-[A-Za-z]\S{0,200})(?: (.{1,300}?))?(?: ?[#(] ?\(?source: .*)?$/.exec(text.trimEnd());
       if (entry?.[1] === undefined) inTable = false;
-      else if (options.size < optionLimit) options.set(entry[1], entry[2] ?? null);
+      else if (options.size < optionLimit) options.set(keepString(entry[1]), keep(entry[2]));
       return entry !== null;
     },
     options: (): LoggedOption[] => [...options].map(([name, value]) => ({ name, value })),
@@ -44,4 +49,8 @@ export function createOptionReader() {
     },
   };
 }
+function keep(value: string | undefined): string | null {
+  return value === undefined ? null : keepString(value);
+}
+
 export type OptionReader = ReturnType<typeof createOptionReader>;

@@ -1,12 +1,17 @@
 import { createClaim } from "@/lib/logs/claim";
+import { keepString } from "@/lib/logs/keep-string";
 import type { LoggedEvent, PerformanceSummary } from "@/lib/logs/parsed-log";
 
-const eventLimit = 300;
+/** Events that say something of set-up, solve and balance; the others are passed over. */
+const keptEvents = new Set([
+  "KSPSetUp", "KSPSolve", "KSPGMRESOrthog", "PCSetUp", "PCSetUpOnBlocks", "PCApply", "MatMult", "MatSolve",
+  "MatLUFactorSym", "MatLUFactorNum", "MatCholFctrSym", "MatCholFctrNum", "VecNorm", "VecDot", "VecMDot",
+]);
 const eventRow = /^([A-Za-z][\w+:-]{0,60}) +(\d{1,12}) +\d+\.\d +(\d\.\d{4}e[+-]\d{2,3}) +(\d+\.\d(?:e[+-]\d{2})?|inf|nan) /;
 const startedBy = / with (\d{1,8}) process(?:or)?(?:s|\(es\))?,? by /;
 const ratioRow = /^(?:Time \(sec\)|Flops?):\s+(\d\.\d{3,6}e[+-]\d{2,3})\s+(\d+\.\d{3,5})\s/;
 
-type EventSum = LoggedEvent & { ambiguous: boolean; stages: Map<number, string> };
+type EventSum = LoggedEvent & { ambiguous: boolean; stage: number };
 
 /** Reads the performance summary (`-log_view`, formerly `-log_summary`): header, totals, event table of every stage. */
 export function createPerformanceReader() {
@@ -24,7 +29,7 @@ export function createPerformanceReader() {
     const started = startedBy.exec(text);
     if (started !== null && processes.line === null) processes.state(Number(started[1]), line);
     const release = /^Using Petsc (?:Release Version (\d+\.\d+\.\d+)|Development (?:GIT|HG) revision: (\S{1,60}))/.exec(text);
-    if (release !== null) version.state(release[1] ?? release[2] ?? "", line);
+    if (release !== null) version.state(keepString(release[1] ?? release[2] ?? ""), line);
     const ratio = ratioRow.exec(text);
     if (ratio === null) return;
     if (text.startsWith("Time")) {
@@ -37,24 +42,24 @@ export function createPerformanceReader() {
   }
 
   function readEvent(text: string, line: number): void {
+    if (!keptEvents.has(text.slice(0, text.indexOf(" ")))) return;
     const match = eventRow.exec(text);
     if (match === null) return;
-    const [row, name = "", calls, seconds, printedRatio] = match;
+    const [, piece = "", calls, seconds, printedRatio] = match;
     const ratio = Number(printedRatio);
     const timeRatioOfEvent = Number.isFinite(ratio) ? ratio : 0;
+    const name = keepString(piece);
     const known = events.get(name);
     if (known === undefined) {
-      if (events.size >= eventLimit) return;
-      const stages = new Map([[stage, row]]);
-      events.set(name, { name, calls: Number(calls), seconds: Number(seconds), timeRatio: timeRatioOfEvent, line, ambiguous: false, stages });
+      events.set(name, { name, calls: Number(calls), seconds: Number(seconds), timeRatio: timeRatioOfEvent, line, ambiguous: false, stage });
       return;
     }
-    const sameStage = known.stages.get(stage);
-    if (sameStage !== undefined) {
-      known.ambiguous = known.ambiguous || sameStage !== row;
+    // Stages are printed one after the other: a row of an earlier one cannot come again.
+    if (known.stage >= stage) {
+      known.ambiguous = known.ambiguous || known.stage !== stage || known.calls !== Number(calls) || known.seconds !== Number(seconds);
       return;
     }
-    known.stages.set(stage, row);
+    known.stage = stage;
     known.calls += Number(calls);
     known.seconds += Number(seconds);
     known.timeRatio = Math.max(known.timeRatio, timeRatioOfEvent);

@@ -2,10 +2,12 @@ import { createClaim } from "@/lib/logs/claim";
 import { isNestedPrefix, readReasonLine } from "@/lib/logs/converged-reasons";
 import { createFailureReader } from "@/lib/logs/failure-reader";
 import { indentOf } from "@/lib/logs/clean-line";
+import { keepString } from "@/lib/logs/keep-string";
 import type { MonitorLine } from "@/lib/logs/monitor-line";
 import { createMumpsReader } from "@/lib/logs/mumps-reader";
 import { createOptionReader } from "@/lib/logs/option-reader";
 import { createPerformanceReader } from "@/lib/logs/performance-summary";
+import type { HistoryPool } from "@/lib/logs/residual-history";
 import { createSolveTracker } from "@/lib/logs/solve-tracker";
 import { createViewBuilder, readViewHeader, type ViewBuilder } from "@/lib/logs/solver-view";
 import { readPeakMemory, readStrategyLine, readTrueResidual } from "@/lib/logs/statement-lines";
@@ -16,8 +18,8 @@ const setupFailureLine = /^(?:PC failed|PCSETUP_FAILED|PC_FAILED) due to ([A-Z_]
  * Everything one run of a program printed. A log may hold several programs one after the other; `startsNext` tells
  * when a line can only belong to the next one.
  */
-export function createProgramRecord(historyLimit: number, line: number) {
-  const tracker = createSolveTracker(historyLimit);
+export function createProgramRecord(histories: HistoryPool, line: number) {
+  const tracker = createSolveTracker(histories);
   const performance = createPerformanceReader();
   const options = createOptionReader();
   const mumps = createMumpsReader();
@@ -54,14 +56,14 @@ export function createProgramRecord(historyLimit: number, line: number) {
       if (reason !== null) return tracker.reason(reason, lineNumber);
     }
     const setupFailure = first === 80 ? setupFailureLine.exec(text) : null;
-    if (setupFailure?.[1] !== undefined) return tracker.setupFailure(setupFailure[1], lineNumber);
+    if (setupFailure?.[1] !== undefined) return tracker.setupFailure(keepString(setupFailure[1]), lineNumber);
     const residual = readTrueResidual(text);
     if (residual !== null) return tracker.trueResidual(residual, lineNumber);
     const bytes = first === 77 ? readPeakMemory(text) : null;
     if (bytes !== null) return peakMemoryBytes.state(bytes, lineNumber);
     const name = readStrategyLine(text);
     if (name !== null) return strategyName.state(name, lineNumber);
-    if (mumps.take(text, lineNumber) || options.take(text, lineNumber)) return;
+    if (options.take(text, lineNumber) || mumps.take(text, lineNumber)) return;
     failure.take(text, lineNumber);
   }
 

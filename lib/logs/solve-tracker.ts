@@ -1,17 +1,19 @@
 import { createClaim } from "@/lib/logs/claim";
 import { isNestedPrefix, type ReasonLine } from "@/lib/logs/converged-reasons";
 import type { MonitorLine } from "@/lib/logs/monitor-line";
-import { createResidualHistory } from "@/lib/logs/residual-history";
+import type { HistoryPool, ResidualHistory } from "@/lib/logs/residual-history";
 import type { SolverView } from "@/lib/logs/solver-view";
 
 /** One solve of the outermost solver, as far as the log shows it. */
-export function createSolve(historyLimit: number, line: number) {
+export function createSolve(history: ResidualHistory, line: number) {
   return {
     line,
-    history: createResidualHistory(historyLimit),
+    history,
     norm: createClaim<string>(),
     first: Number.NaN,
-    last: null as (MonitorLine & { line: number }) | null,
+    last: null as MonitorLine | null,
+    /** Line of the last residual. */
+    lastLine: line,
     /** Line where the numbering of iterations stopped making sense. */
     brokenAt: null as number | null,
     nonFiniteAt: null as number | null,
@@ -30,7 +32,7 @@ function isRepeat(last: MonitorLine, next: MonitorLine): boolean {
 }
 
 /** Follows the solves of one program: which line belongs to which solve of the outermost solver. */
-export function createSolveTracker(historyLimit: number) {
+export function createSolveTracker(histories: HistoryPool) {
   let outerLevel: number | null = null;
   let current: Solve | null = null;
   let lastComplete: Solve | null = null;
@@ -56,7 +58,8 @@ export function createSolveTracker(historyLimit: number) {
   }
 
   function begin(line: number): Solve {
-    const solve = createSolve(historyLimit, line);
+    if (current !== null && current !== lastComplete) histories.giveBack(current.history);
+    const solve = createSolve(histories.take(), line);
     solve.view = pendingView;
     pendingView = null;
     current = solve;
@@ -65,7 +68,8 @@ export function createSolveTracker(historyLimit: number) {
 
   function continueWith(solve: Solve, entry: MonitorLine, line: number): void {
     if (solve.last === null) solve.first = entry.monitored;
-    solve.last = { ...entry, line };
+    solve.last = entry;
+    solve.lastLine = line;
     if (entry.norm !== null) solve.norm.state(entry.norm, line);
     if (Number.isNaN(entry.monitored) && !entry.rounded) solve.nonFiniteAt ??= line;
     solve.history.add(entry);
@@ -73,6 +77,7 @@ export function createSolveTracker(historyLimit: number) {
 
   function complete(solve: Solve): void {
     solve.ended = true;
+    if (lastComplete !== null && lastComplete !== solve) histories.giveBack(lastComplete.history);
     lastComplete = solve;
     completed += 1;
   }
@@ -99,15 +104,14 @@ export function createSolveTracker(historyLimit: number) {
     reason(entry: ReasonLine, line: number): void {
       if (isNestedPrefix(entry.prefix) || !isOutermost(entry.level)) return;
       const previous = current;
-      const repeats = previous?.reason?.line === line - 1 && previous.reason.name === entry.name;
-      if (repeats && previous.reason?.iterations === entry.iterations) repeatedReasons += 1;
-      const solve = previous === null || previous.ended ? begin(line) : previous;
-      if (repeats && previous.last !== null && solve.last === null) {
+      const stated = previous?.reason ?? null;
+      if (stated !== null && stated.line === line - 1 && stated.name === entry.name && stated.iterations === entry.iterations) {
         // The very same line twice: the second may be a copy, so what the monitors said still belongs to it.
-        current = previous;
+        repeatedReasons += 1;
         completed += 1;
         return;
       }
+      const solve = previous === null || previous.ended ? begin(line) : previous;
       solve.reason = { ...entry, line };
       complete(solve);
     },
@@ -122,7 +126,7 @@ export function createSolveTracker(historyLimit: number) {
       const solve = current;
       if (solve === null) pendingView = view;
       else if (solve.ended) solve.view = view;
-      else if (solve.last?.line === view.line - 1) {
+      else if (solve.last !== null && solve.lastLine === view.line - 1) {
         // Without a reason, a tree printed straight after the last residual still marks the end of the solve.
         solve.view = view;
         complete(solve);

@@ -1,3 +1,4 @@
+import { keepString } from "@/lib/logs/keep-string";
 import { createClaim, type Claim } from "@/lib/logs/claim";
 
 export type ViewKind = "KSP" | "PC" | "Mat";
@@ -12,9 +13,9 @@ export type ViewNode = {
   role: "solver" | "split" | "velocity-solver" | "schur-solver" | "factor" | "system" | "other";
   type: Claim<string>;
   /** Numbers such as `rtol`, `restart`, `rows`, `nonzeros`, `INFOG(29)`, with their line. */
-  numbers: Map<string, Claim<number>>;
+  numbers: Map<string, Claim<number>> | null;
   /** Words such as `norm`, `composition`, `factorisation`, `hypre`, `package`, `guess`. */
-  words: Map<string, Claim<string>>;
+  words: Map<string, Claim<string>> | null;
   children: ViewNode[];
 };
 
@@ -36,22 +37,25 @@ export function readViewHeader(text: string): { kind: ViewKind; prefix: string; 
   const match = header.exec(text);
   if (match === null) return null;
   const kind = match[1] === "KSP" ? "KSP" : match[1] === "PC" ? "PC" : "Mat";
-  return { kind, prefix: match[2] ?? "", processes: match[3] === undefined ? null : Number(match[3]) };
+  return { kind, prefix: keepString(match[2] ?? ""), processes: match[3] === undefined ? null : Number(match[3]) };
 }
 
 function number(node: ViewNode, name: string, printed: string | undefined, line: number): void {
   const value = Number(printed);
   if (printed === undefined || printed === "" || !Number.isFinite(value)) return;
-  const claim = node.numbers.get(name) ?? createClaim<number>();
+  const key = keepString(name);
+  const known = (node.numbers ??= new Map());
+  const claim = known.get(key) ?? createClaim<number>();
   claim.state(value, line);
-  node.numbers.set(name, claim);
+  known.set(key, claim);
 }
 
 function word(node: ViewNode, name: string, value: string | undefined, line: number): void {
   if (value === undefined) return;
-  const claim = node.words.get(name) ?? createClaim<string>();
-  claim.state(value, line);
-  node.words.set(name, claim);
+  const known = (node.words ??= new Map());
+  const claim = known.get(name) ?? createClaim<string>();
+  claim.state(keepString(value), line);
+  known.set(name, claim);
 }
 
 type Reader = { pattern: RegExp; read: (node: ViewNode, match: RegExpExecArray, line: number) => void };
@@ -108,9 +112,15 @@ const readers: Record<ViewKind, readonly Reader[]> = {
       pattern: /^\((\d),(\d)\) : (NULL|(?:prefix="([^"\s]{1,200})", )?type=\w+, rows=\d+, cols=\d+)$/,
       read: (node, match, line) => word(node, `block ${match[1]}${match[2]}`, match[3] === "NULL" ? "none" : (match[4] ?? "unnamed"), line),
     },
-    { pattern: /^(R?INFOG|ICNTL|CNTL)\((\d{1,2})\) .*: (-?\d[\d.]*(?:e[+-]\d{2,3})?)$/, read: (node, match, line) => number(node, `${match[1]}(${match[2]})`, match[3], line) },
+    {
+      pattern: /^(RINFOG\(3\)|INFOG\((?:13|2[01289]|3[456])\)|ICNTL\(35\)) .*: (-?\d[\d.]*(?:e[+-]\d{2,3})?)$/,
+      read: (node, match, line) => number(node, match[1] ?? "", match[2], line),
+    },
   ],
 };
+
+/** Letters that a line of each kind can begin with. */
+const firstLetters: Record<ViewKind, string> = { KSP: "Grmtu", PC: "FHl", Mat: "rpt(RI" };
 
 function roleOf(heading: string): ViewNode["role"] {
   if (heading.startsWith("Split number")) return "split";
@@ -170,7 +180,7 @@ export function createViewBuilder(text: string, indent: number, line: number) {
 export type ViewBuilder = ReturnType<typeof createViewBuilder>;
 
 function createNode(kind: ViewKind, prefix: string, processes: number | null, indent: number, line: number, role: ViewNode["role"]): ViewNode {
-  return { kind, prefix, processes, indent, line, role, type: createClaim<string>(), numbers: new Map(), words: new Map(), children: [] };
+  return { kind, prefix, processes, indent, line, role, type: createClaim<string>(), numbers: null, words: null, children: [] };
 }
 
 function ownerOf(stack: readonly ViewNode[], indent: number): ViewNode | null {
@@ -184,9 +194,10 @@ function ownerOf(stack: readonly ViewNode[], indent: number): ViewNode | null {
 function readProperty(node: ViewNode, text: string, indent: number, line: number): void {
   if (text.startsWith("type: ") && indent === node.indent + 2) {
     const type = /^type: ([\w-]{1,40})$/.exec(text);
-    if (type?.[1] !== undefined) node.type.state(type[1], line);
+    if (type?.[1] !== undefined) node.type.state(keepString(type[1]), line);
     return;
   }
+  if (!firstLetters[node.kind].includes(text.charAt(0))) return;
   for (const { pattern, read } of readers[node.kind]) {
     const match = pattern.exec(text);
     if (match !== null) {
@@ -197,13 +208,13 @@ function readProperty(node: ViewNode, text: string, indent: number, line: number
 }
 
 export function numberOf(node: ViewNode | null | undefined, name: string): number | null {
-  return node?.numbers.get(name)?.value ?? null;
+  return node?.numbers?.get(name)?.value ?? null;
 }
 
 export function wordOf(node: ViewNode | null | undefined, name: string): string | null {
-  return node?.words.get(name)?.value ?? null;
+  return node?.words?.get(name)?.value ?? null;
 }
 
 export function lineOf(node: ViewNode | null | undefined, name: string): number | null {
-  return node?.numbers.get(name)?.line ?? node?.words.get(name)?.line ?? null;
+  return node?.numbers?.get(name)?.line ?? node?.words?.get(name)?.line ?? null;
 }

@@ -1,3 +1,5 @@
+import { keepString } from "@/lib/logs/keep-string";
+
 const number = String.raw`(\d+(?:\.\d+)?(?:e[+-]\d{2,3})?|[+-]?(?:nan|inf))`;
 const trueResidual = new RegExp(String.raw`^(?:final )?true relative residual(?: norm)?(?: \|\|b ?- ?[AK] ?\*? ?x\|\| ?/ ?\|\|b\|\|)? *[=:] *${number}$`, "i");
 const residualRatio = new RegExp(String.raw`^\|\|b ?- ?[AK] ?\*? ?x\|\| ?/ ?\|\|b\|\| *[=:] *${number}$`, "i");
@@ -6,6 +8,9 @@ const strategyLine = /^#? ?Saddlemark strategy: ([a-z-]{3,40})$/;
 
 /** `True relative residual ||b-Kx||/||b|| = 1.0e-07` as programs print it; NaN for nan, null for other lines. */
 export function readTrueResidual(text: string): number | null {
+  const first = text.charCodeAt(0) | 32;
+  // t, f or a bar (the bar has the bit set already).
+  if (first !== 116 && first !== 102 && first !== 124) return null;
   const match = trueResidual.exec(text) ?? residualRatio.exec(text);
   if (match === null) return null;
   const value = Number(match[1]);
@@ -23,5 +28,6 @@ export function readPeakMemory(text: string): number | null {
  * whose solver tree does not identify them.
  */
 export function readStrategyLine(text: string): string | null {
-  return strategyLine.exec(text)?.[1] ?? null;
+  const name = strategyLine.exec(text)?.[1];
+  return name === undefined ? null : keepString(name);
 }
