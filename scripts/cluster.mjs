@@ -7,7 +7,6 @@ import { endLeftovers } from "./lib/cluster-server.mjs";
 import { checkDataFolder, dataPaths, prepareDataFolder } from "./lib/data-folder.mjs";
 import { startDatabase } from "./lib/database.mjs";
 import { openLog } from "./lib/files.mjs";
-import { takeLock } from "./lib/lock.mjs";
 import { ensureNpmPackages } from "./lib/npm-packages.mjs";
 import { PlainError, runMain } from "./lib/plain-error.mjs";
 import { projectRoot } from "./lib/root.mjs";

@@ -132,12 +132,12 @@ test("a remembered port that somebody took meanwhile is exchanged for a free one
 test("the server listens on 127.0.0.1 alone, wants a password, and does not run as root", async () => {
   const url = new URL(await start());
   const settings = await withClient(url.href, (client) =>
-    client.query("select name, setting from pg_settings where name in ('listen_addresses', 'unix_socket_directories', 'password_encryption', 'TimeZone') order by name"),
+    client.query("select name, setting from pg_settings where name in ('listen_addresses', 'unix_socket_directories', 'password_encryption', 'TimeZone') order by name collate \"C\""),
   );
   expect(settings.rows.map((row) => `${row.name}=${row.setting}`)).toEqual([
+    "TimeZone=UTC",
     "listen_addresses=127.0.0.1",
     "password_encryption=scram-sha-256",
-    "TimeZone=UTC",
     "unix_socket_directories=",
   ]);
   url.password = "wrong";
@@ -157,12 +157,13 @@ test("a cluster of another major version is refused and left as it was", async (
 
 test("a half-made cluster of a killed first start is thrown away and made anew", async () => {
   const paths = prepareDataFolder(join(home, "half"));
+  const secrets = ensureSecrets(paths);
   writeClusterRecord(paths, { folder: paths.postgres, port: readClusterRecord(dataFolder())?.port ?? 0, made: false });
   const half = `${paths.postgres}.new`;
   const interrupted = createSupervisor(() => undefined);
   try {
     writeFileSync(half, "half");
-    const { ownerUrl } = await startDatabase({ paths, secrets: ensureSecrets(paths), startService: interrupted.start, say: () => undefined });
+    const { ownerUrl } = await startDatabase({ paths, secrets, startService: interrupted.start, say: () => undefined });
     expect(ownerUrl).toMatch(/^postgres:/);
     expect(existsSync(half)).toBe(false);
   } finally {
