@@ -5,7 +5,11 @@ import { DropdownMenu as MenuPrimitive } from "radix-ui";
 import type { ComponentProps } from "react";
 import { cn } from "./cn";
 
-export const DropdownMenu = MenuPrimitive.Root;
+/** A menu that leaves the page behind it readable: a modal one would hide the focused trigger from screen readers. */
+export function DropdownMenu(props: ComponentProps<typeof MenuPrimitive.Root>) {
+  return <MenuPrimitive.Root modal={false} {...props} />;
+}
+
 export const DropdownMenuTrigger = MenuPrimitive.Trigger;
 export const DropdownMenuRadioGroup = MenuPrimitive.RadioGroup;
 

@@ -4,7 +4,7 @@ import { cn } from "./cn";
 /** A table that scrolls sideways inside its own box when the page is narrow; the box can be reached and moved by keyboard. */
 export function Table({ className, label, ...props }: ComponentProps<"table"> & { /** Names the scrolling region. */ label: string }) {
   return (
-    <div role="region" aria-label={label} tabIndex={0} className="w-full overflow-x-auto print:overflow-visible">
+    <div role="region" aria-label={label} tabIndex={0} className="relative w-full overflow-x-auto print:overflow-visible">
       <table className={cn("w-full border-collapse text-left text-sm", className)} {...props} />
     </div>
   );

@@ -6,7 +6,8 @@ import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 import { Caution } from "@/components/layout/caution";
 import { DeskShell } from "@/components/layout/desk-shell";
 import { EmptyState } from "@/components/layout/empty-state";
-import { FindButton, FindDialog, type FindItem } from "@/components/layout/find-dialog";
+import { FindButton } from "@/components/layout/find-button";
+import { FindDialog, type FindItem } from "@/components/layout/find-dialog";
 import { Mark } from "@/components/layout/mark";
 import { Legend, Margin, MarginFacts, MarginSection, Sheet } from "@/components/layout/sheet";
 
