@@ -2,14 +2,15 @@ import type { Answers } from "@/lib/questionnaire/answers";
 import type { Sizes } from "@/lib/sizes/sizes";
 import type { CostKit, CostStep, IterationCount, ResidualLag, SpectralInterval } from "@/lib/strategies/cost";
 import type { ModelConstants } from "./constants";
+import type { Variant } from "./variant";
 import { conjugateGradientSteps, minresBound, saddleIntervals } from "./saddle-bounds";
 
-type Case = { answers: Answers; sizes: Sizes; constants: ModelConstants; interval: () => SpectralInterval };
+type Case = { answers: Answers; sizes: Sizes; constants: ModelConstants; interval: () => SpectralInterval; variant: Variant };
 
 /** Counts at 1e-8 scale to other tolerances as ln(2 / tolerance): convergence is linear. */
 const referenceTolerance = 1e-8;
 
-export function iterationCounts({ answers, sizes, constants, interval }: Case): CostKit["iterations"] {
+export function iterationCounts({ answers, sizes, constants, interval, variant }: Case): CostKit["iterations"] {
   const divisions = Math.cbrt(sizes.cells);
   const { degree, hardware } = answers;
   const contrast = answers.contrast.ratio;
@@ -19,13 +20,15 @@ export function iterationCounts({ answers, sizes, constants, interval }: Case): 
       const { low, high } = interval();
       const steps = conjugateGradientSteps(high / low, tolerance);
       const bound = minresBound(saddleIntervals(low, high), tolerance);
-      const single = sizes.perCellPressure === 1 ? constants.multigridPenaltyLow : constants.multigridPenaltyHigh;
-      const expected = Math.min(bound, constants.minresPerCg * steps) * (schur === "exact" ? 1 : single);
-      return { expected, bound: schur === "exact" ? bound : null, why: blockDiagonalSteps(interval(), tolerance, bound, expected) };
+      const penalty = schur === "exact" ? 1 : multigridPenalty(variant, sizes, contrast, constants);
+      const expected = Math.min(bound, constants.minresPerCg * steps) * penalty * krylovFactor(variant, constants);
+      const proven = schur === "exact" && interval().computed;
+      return { expected, bound: proven ? bound : null, why: blockDiagonalSteps(interval(), tolerance, bound, expected) };
     },
     blockFactorised: (tolerance) => {
       const { low, high } = interval();
-      const expected = constants.fgmresPerCg * conjugateGradientSteps(high / low, tolerance);
+      const triangular = variant.blocks === "triangular" ? constants.triangularPerFull : 1;
+      const expected = constants.fgmresPerCg * conjugateGradientSteps(high / low, tolerance) * triangular;
       return plain(expected, "Expected FGMRES iterations", "c m_CG(d2 / d1), true residual", "c fitted to reference runs; the preconditioned spectrum lies in [min(1, d1), max(1, d2)] and {1}", [
         { name: "d2 / d1", value: high / low, unit: "" },
         { name: "tolerance", value: tolerance, unit: "" },
@@ -75,7 +78,7 @@ export function iterationCounts({ answers, sizes, constants, interval }: Case): 
  * How far the true relative residual lags behind the one that MINRES monitors, |r| in the P^-1 norm: a factor that grows as h^-2 with h relative to the
  * domain (the two blocks of P scale apart as the mesh is refined), fitted at uniform coefficients. Contrast can make it far worse: see the notes.
  */
-export function residualLag(kind: Parameters<CostKit["residualLag"]>[0], { answers, sizes, constants }: Omit<Case, "interval">): ResidualLag {
+export function residualLag(kind: Parameters<CostKit["residualLag"]>[0], { answers, sizes, constants }: Omit<Case, "interval" | "variant">): ResidualLag {
   const refinement = sizes.cells ** (2 / 3);
   const factors = {
     "block-diagonal": answers.degree === 1 ? constants.lagLow : constants.lagHigh,
@@ -100,6 +103,22 @@ export function residualLag(kind: Parameters<CostKit["residualLag"]>[0], { answe
       source: "Fitted to true and monitored residuals of the reference runs",
     },
   };
+}
+
+/** More iterations than with the exact Schur complement. Aggregation degrades with the contrast, classical coarsening follows it. */
+function multigridPenalty({ multigrid }: Variant, { perCellPressure }: Sizes, contrast: number, constants: ModelConstants): number {
+  const classical = perCellPressure === 1 ? constants.multigridPenaltyLow : constants.multigridPenaltyHigh;
+  const factors = {
+    classical: 1,
+    sparse: constants.sparseCoarseningPenalty,
+    aggregation: constants.aggregationPenalty * contrast ** constants.aggregationContrast,
+  };
+  return classical * factors[multigrid];
+}
+
+function krylovFactor({ krylov }: Variant, constants: ModelConstants): number {
+  const factors = { minres: 1, gmres: constants.gmresPerMinres, fgmres: constants.trueNormPerMinres };
+  return factors[krylov];
 }
 
 function toleranceShare(tolerance: number): number {

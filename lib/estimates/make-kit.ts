@@ -7,15 +7,16 @@ import { advisedGamma } from "@/lib/strategies/regularisation";
 import type { CostKit, DirectCost, SpectralInterval } from "@/lib/strategies/cost";
 import type { ModelConstants } from "./constants";
 import { directCost } from "./direct-cost";
-import { dissect } from "./front-model";
+import { dissect, type FrontTree } from "./front-model";
 import { iterationCounts, residualLag } from "./iteration-counts";
 import { machineModel, type MachineModel } from "./machine-model";
 import { multigridCost } from "./multigrid-cost";
 import { spectralInterval } from "./spectral-interval";
 import { subdomainCost } from "./subdomain-cost";
+import { advisedVariant, type Variant } from "./variant";
 
 /** Binds the models to one case and machine. Results that several strategies need are computed once. */
-export function makeKit(answers: Answers, sizes: Sizes, constants: ModelConstants): CostKit {
+export function makeKit(answers: Answers, sizes: Sizes, constants: ModelConstants, variant: Variant = advisedVariant): CostKit {
   const machine = machineModel(answers.hardware, constants);
   const system = activeSystem(sizes);
   const multipliers = multiplierSystem(answers, sizes);
@@ -26,18 +27,21 @@ export function makeKit(answers: Answers, sizes: Sizes, constants: ModelConstant
     multipliers,
     gamma,
     spectralInterval: interval,
-    factoriseSystem: ({ lowRank }) => factoriseSystem({ answers, sizes, system, machine, constants }, lowRank),
+    factoriseSystem: ({ lowRank }) => factoriseSystem({ answers, sizes, system, machine, constants }, lowRank, variant),
     factoriseSchur: once(() => factoriseSchur({ answers, sizes, system, machine, constants })),
     multigridOn: (block) => {
+      const scalarSweeps = variant.multigrid === "aggregation" ? constants.aggregationSweeps : constants.multigridSweeps;
+      const scalar = { kind: variant.multigrid, sweeps: scalarSweeps };
+      const velocity = { unknowns: system.velocityUnknowns, nonzeros: system.velocityNonzeros };
       const blocks = {
-        schur: { name: "the Schur complement", unknowns: system.pressureUnknowns, nonzeros: system.schurNonzeros, sweeps: constants.multigridSweeps },
-        augmented: { name: "the augmented block", unknowns: system.velocityUnknowns, nonzeros: system.velocityNonzeros, sweeps: constants.multigridSweeps / 2 },
-        multipliers: { name: "the face multipliers", unknowns: multipliers.unknowns, nonzeros: multipliers.nonzeros, sweeps: constants.multigridSweeps },
-        auxiliary: { name: "the auxiliary spaces", unknowns: system.velocityUnknowns, nonzeros: system.velocityNonzeros, sweeps: constants.auxiliarySweeps },
-      };
+        schur: { name: "the Schur complement", unknowns: system.pressureUnknowns, nonzeros: system.schurNonzeros, ...scalar },
+        multipliers: { name: "the face multipliers", unknowns: multipliers.unknowns, nonzeros: multipliers.nonzeros, ...scalar },
+        augmented: { name: "the augmented block", ...velocity, kind: "aggregation", sweeps: constants.aggregationSweeps },
+        auxiliary: { name: "the auxiliary spaces", ...velocity, kind: "classical", sweeps: constants.auxiliarySweeps },
+      } as const;
       return multigridCost(blocks[block], machine, constants);
     },
-    iterations: iterationCounts({ answers, sizes, constants, interval }),
+    iterations: iterationCounts({ answers, sizes, constants, interval, variant }),
     residualLag: (norm) => residualLag(norm, { answers, sizes, constants }),
     iterationSeconds: ({ nonzeros, unknowns, vectors, reductions }) => {
       const bytes = 12 * nonzeros + 8 * unknowns * vectors;
@@ -74,17 +78,31 @@ function multiplierSystem({ boundary }: Answers, sizes: Sizes): CostKit["multipl
   return { unknowns, nonzeros: unknowns * sizes.perFace * (2 * sizes.facesPerCell - 1) };
 }
 
-function factoriseSystem({ answers, sizes, system, machine, constants }: KitCase, lowRank: boolean): DirectCost {
-  const tree = dissect(
+function factoriseSystem({ answers, sizes, system, machine, constants }: KitCase, lowRank: boolean, variant: Variant): DirectCost {
+  const thickness = separatorThickness(variant.ordering, sizes.cells, constants);
+  const symmetric = dissect(
     {
       cells: sizes.cells,
       perSeparatorArea: flatCutFacesOf(answers, sizes) * sizes.perFace,
       perCell: sizes.perCellVelocity + sizes.perCellPressure,
       perCellBorder: sizes.facesPerCell * sizes.perFace,
     },
-    constants.separatorThickness,
+    thickness,
   );
+  const tree = variant.factorisation === "lu" ? doubled(symmetric) : symmetric;
   return directCost({ name: "the saddle-point matrix", unknowns: system.unknowns, nonzeros: system.nonzeros, tree }, machine, constants, lowRank);
+}
+
+/** Minimum-fill orderings find separators that are thicker, the more so the larger the mesh. */
+function separatorThickness(ordering: Variant["ordering"], cells: number, constants: ModelConstants): number {
+  if (ordering === "nested-dissection") return constants.separatorThickness;
+  return Math.max(constants.separatorThickness, constants.minimumFillThickness * (cells / 1000) ** constants.minimumFillGrowth);
+}
+
+/** LU stores and eliminates both triangles. */
+function doubled(tree: FrontTree): FrontTree {
+  const levels = tree.levels.map((level) => ({ ...level, entries: 2 * level.entries, flops: 2 * level.flops }));
+  return { entries: 2 * tree.entries, flops: 2 * tree.flops, levels };
 }
 
 /**

@@ -1,8 +1,9 @@
 import type { MultigridCost } from "@/lib/strategies/cost";
 import type { ModelConstants } from "./constants";
 import type { MachineModel } from "./machine-model";
+import type { Variant } from "./variant";
 
-export type MultigridBlock = { name: string; unknowns: number; nonzeros: number; sweeps: number };
+export type MultigridBlock = { name: string; unknowns: number; nonzeros: number; kind: Variant["multigrid"]; sweeps: number };
 
 /**
  * Algebraic multigrid on one block. A cycle moves the block's bytes `sweeps` times (smoothing, residuals and transfers on all levels), more as the operators
@@ -10,12 +11,15 @@ export type MultigridBlock = { name: string; unknowns: number; nonzeros: number;
  * Set-up scales with the nonzeros, and its coarse levels do not with the cores.
  */
 export function multigridCost(block: MultigridBlock, machine: MachineModel, constants: ModelConstants): MultigridCost {
-  const complexity = Math.max(1, block.unknowns / 1000) ** constants.multigridGrowth;
+  const aggregation = block.kind === "aggregation";
+  const share = block.kind === "sparse" ? constants.sparseCoarseningShare : 1;
+  const complexity = aggregation ? 1 : share * operatorComplexity(block.unknowns, constants.multigridGrowth);
+  const setupPerNonzero = aggregation ? constants.aggregationSetupSecondsPerNonzero : constants.multigridSetupSecondsPerNonzero;
   const levels = Math.max(1, Math.ceil(Math.log(Math.max(2, block.unknowns)) / Math.log(8)));
   const bytes = 12 * block.nonzeros * complexity;
   const latency = machine.cores > 1 ? levels * constants.multigridPerLevelSyncs * machine.latencySeconds * (1 + Math.log2(machine.cores)) : 0;
   const cycleSeconds = machine.streamSeconds(bytes * block.sweeps, bytes) + latency;
-  const setupSeconds = (constants.multigridSetupSecondsPerNonzero * block.nonzeros * complexity * (1 + 0.1 * Math.log2(machine.cores))) / machine.cores + 20 * latency;
+  const setupSeconds = (setupPerNonzero * block.nonzeros * complexity * (1 + 0.1 * Math.log2(machine.cores))) / machine.cores + 20 * latency;
   const memoryBytes = 1.5 * bytes + 16 * block.unknowns;
   return {
     setupSeconds,
@@ -37,4 +41,9 @@ export function multigridCost(block: MultigridBlock, machine: MachineModel, cons
       },
     ],
   };
+}
+
+/** From 1 on small systems to 1 + growth: coarse operators fill in three dimensions until the strong couplings are used up. */
+function operatorComplexity(unknowns: number, growth: number): number {
+  return 1 + (growth * unknowns) / (unknowns + 1e5);
 }

@@ -1,65 +1,167 @@
 import type { Discretisation } from "@/lib/questionnaire/answer-sets";
 import type { SpectralInterval } from "@/lib/strategies/cost";
-import type { CellShape } from "./spectral-interval";
+
+/** Shapes of cells that the table knows. */
+export const cellShapes = ["cube", "tetrahedron", "jittered", "octahedron", "relaxed", "voronoi"] as const;
+export type CellShape = (typeof cellShapes)[number];
+
+type Interval = readonly [number, number];
+type Entry = { intervals: readonly Interval[]; computed: readonly number[]; source: string };
 
 /**
- * Extreme eigenvalues of diag(A_K)^-1 A_K for one cell K, by element, shape and degree (the first entry is degree 1). `computed` ones are recomputed by the tests from local
- * matrices, the others come from reference systems and runs.
+ * Smallest and largest eigenvalue of diag(A_K)^-1 A_K over the cells K, by element, shape and degree (the first entry is degree 1). Degrees listed in `computed`
+ * come from local matrices and are recomputed by the tests (lib/numerics/elements); they hold for every mesh of such cells and any coefficient that is
+ * constant in each. The others are taken from assembled reference systems or carried on, and bound nothing.
  */
-export function elementIntervals(discretisation: Discretisation, degree: number, shape: CellShape): SpectralInterval {
-  const rows = intervals[discretisation];
-  const [low, high] = rows[degree - 1] ?? rows[rows.length - 1] ?? [1, 1];
-  const widening = shapeWidening[shape];
-  const source = sources[discretisation];
-  return { low: low * widening.low, high: high * widening.high, source: widening.low === 1 ? source : `${source}; ${widening.source}`, computed: false };
+export function elementInterval(discretisation: Discretisation, degree: number, shape: CellShape): SpectralInterval {
+  const entry = table[discretisation][shape] ?? table[discretisation][fallbackShape[discretisation]] ?? unknownEntry;
+  const [low, high] = entry.intervals[degree - 1] ?? unknownEntry.intervals[0] ?? [1, 1];
+  return { low, high, source: entry.source, computed: entry.computed.includes(degree) };
 }
 
-const intervals: Record<Discretisation, readonly (readonly [number, number])[]> = {
-  rt: [
-    [0.5, 2],
-    [0.1033, 2.991],
-    [0.0975, 3.2585],
-    [0.065, 3.6],
-    [0.05, 3.9],
-    [0.04, 4.2],
-  ],
-  bdm: [
-    [0.1066, 4.618],
-    [0.1298, 3.4206],
-    [0.025, 4.9],
-    [0.02, 5.2],
-    [0.016, 5.5],
-    [0.013, 5.8],
-  ],
-  "rt-hex": [
-    [0.5, 1.5],
-    [0.1938, 2.4186],
-    [0.13, 2.8],
-    [0.1, 3.1],
-    [0.08, 3.4],
-    [0.065, 3.7],
-  ],
-  "vem-mixed": [
-    [0.25, 2],
-    [0.08, 3],
-    [0.04, 4],
-    [0.025, 5],
-    [0.016, 6],
-    [0.011, 7],
-  ],
-};
+const unknownEntry: Entry = { intervals: [[0.01, 10]], computed: [], source: "No data" };
 
-const sources: Record<Discretisation, string> = {
-  rt: "Local matrices and assembled reference systems, basis of the reference runs",
-  bdm: "Local matrices and assembled reference systems, basis of the reference runs",
-  "rt-hex": "Tensor-product local matrices, basis of the reference runs",
-  "vem-mixed": "Surrogate for scaled moments with the diagonal stabilisation; a pilot trial tells better",
-};
+const fallbackShape: Record<Discretisation, CellShape> = { rt: "jittered", bdm: "jittered", "rt-hex": "jittered", "vem-mixed": "voronoi" };
 
-const shapeWidening: Record<CellShape, { low: number; high: number; source: string }> = {
-  cube: { low: 1, high: 1, source: "" },
-  tetrahedron: { low: 1, high: 1, source: "" },
-  octahedron: { low: 1, high: 1, source: "" },
-  jittered: { low: 0.4, high: 1.1, source: "widened as the jittered reference meshes (0.2 h)" },
-  voronoi: { low: 0.5, high: 1.3, source: "widened for random cells" },
+const table: Record<Discretisation, Partial<Record<CellShape, Entry>>> = {
+  rt: {
+    tetrahedron: {
+      intervals: [
+        [0.5, 2],
+        [0.1033, 2.991],
+        [0.0975, 3.2585],
+        [0.07, 3.7],
+        [0.055, 4.1],
+        [0.045, 4.5],
+      ],
+      computed: [1],
+      source: "Kuhn tetrahedra: local matrix at degree 1, assembled reference systems at degrees 2 and 3, carried on above",
+    },
+    jittered: {
+      intervals: [
+        [0.2127, 2.243],
+        [0.0323, 3.145],
+        [0.03, 3.6],
+        [0.022, 4.1],
+        [0.017, 4.5],
+        [0.014, 4.9],
+      ],
+      computed: [],
+      source: "Tetrahedra jittered by 0.2 h: assembled reference systems at degrees 1 and 2, carried on above",
+    },
+  },
+  bdm: {
+    tetrahedron: {
+      intervals: [
+        [0.1012, 4.8045],
+        [0.1298, 3.4206],
+        [0.025, 4.9],
+        [0.02, 5.3],
+        [0.016, 5.7],
+        [0.013, 6.1],
+      ],
+      computed: [1],
+      source: "Kuhn tetrahedra: local matrix at degree 1 over all orders of corners, an assembled reference system at degree 2, counts of reference runs at degree 3, carried on above",
+    },
+    jittered: {
+      intervals: [
+        [0.0506, 5.3],
+        [0.05, 4],
+        [0.01, 5.5],
+        [0.008, 6],
+        [0.0065, 6.4],
+        [0.0055, 6.8],
+      ],
+      computed: [],
+      source: "Tetrahedra jittered by 0.2 h: sample of local matrices at degree 1, carried on above",
+    },
+  },
+  "rt-hex": {
+    cube: {
+      intervals: [
+        [0.5, 1.5],
+        [0.1938, 2.4186],
+        [0.2529, 3.0861],
+        [0.2646, 4.0067],
+        [0.2599, 4.6378],
+        [0.25, 5.3736],
+      ],
+      computed: [1, 2, 3, 4, 5, 6],
+      source: "Boxes: local matrices, Legendre moments on faces, Legendre by nodal moments inside",
+    },
+    jittered: {
+      intervals: [
+        [0.25, 1.7],
+        [0.09, 2.7],
+        [0.11, 3.4],
+        [0.11, 4.4],
+        [0.11, 5.1],
+        [0.1, 5.9],
+      ],
+      computed: [],
+      source: "Distorted hexahedra: those of boxes, widened as jittered tetrahedra are",
+    },
+  },
+  "vem-mixed": {
+    cube: {
+      intervals: [
+        [0.1726, 2.3199],
+        [0.1515, 2.8326],
+        [0.0785, 2.6077],
+        [0.068, 3.3286],
+        [0.045, 3.6],
+        [0.038, 4],
+      ],
+      computed: [1, 2, 3, 4],
+      source: "Cubes: local matrices, orthonormal moments, stabilised by the degrees of freedom; carried on above degree 4",
+    },
+    tetrahedron: {
+      intervals: [
+        [0.0815, 4.6935],
+        [0.0867, 4.0394],
+        [0.0737, 4.6263],
+        [0.0621, 5.8327],
+        [0.052, 6.6],
+        [0.045, 7.4],
+      ],
+      computed: [1, 2, 3, 4],
+      source: "Kuhn tetrahedra: local matrices, orthonormal moments, stabilised by the degrees of freedom; carried on above degree 4",
+    },
+    octahedron: {
+      intervals: [
+        [0.0926, 2.2797],
+        [0.0789, 4.3457],
+        [0.0549, 3.7721],
+        [0.046, 4.6],
+        [0.037, 5],
+        [0.031, 5.5],
+      ],
+      computed: [1, 2, 3],
+      source: "Truncated octahedra: local matrices, orthonormal moments, stabilised by the degrees of freedom; carried on above degree 3",
+    },
+    voronoi: {
+      intervals: [
+        [0.035, 4.5],
+        [0.0134, 7.3],
+        [0.01, 8],
+        [0.008, 9],
+        [0.0065, 10],
+        [0.0055, 11],
+      ],
+      computed: [],
+      source: "Sample of 40 Poisson-Voronoi cells (10 at degree 2), lower quartile and upper half: extreme cells get worse as their number grows; carried on above",
+    },
+    relaxed: {
+      intervals: [
+        [0.057, 3.2],
+        [0.033, 5.6],
+        [0.023, 5.5],
+        [0.019, 6.4],
+        [0.0155, 7],
+        [0.013, 7.8],
+      ],
+      computed: [],
+      source: "Centroidal cells: between truncated octahedra and random cells (geometric mean)",
+    },
+  },
 };
