@@ -6,17 +6,20 @@ import { outcomes } from "@/lib/runs/run";
 import { solverCase } from "../schema/cases";
 import type { TeamDatabase } from "../scope";
 
+export type RecordState = { asOf: string; version: string };
+
 /**
- * When the team's record of runs last changed, by recording, correcting or withdrawing: ISO 8601 to the microsecond, "" for an empty record.
- * Two equal instants mean the same record.
+ * The state of the team's record of runs. `asOf`: when it last changed by recording, correcting or withdrawing, ISO 8601 to the microsecond, ""
+ * for an empty record. `version` changes with every change, also of transactions that began earlier and ended later.
  */
-export async function recordInstant(db: TeamDatabase, scope: Scope): Promise<string> {
+export async function recordState(db: TeamDatabase, scope: Scope): Promise<RecordState> {
   const { rows } = await db.execute(sql`
-    select coalesce(to_char(greatest(
-      (select max(greatest(recorded_at, withdrawn_at)) from run where team_id = ${scope.teamId}),
-      (select max(changed_at) from run_revision where team_id = ${scope.teamId})
-    ) at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"'), '') as instant`);
-  return z.array(z.object({ instant: z.string() })).parse(rows)[0]?.instant ?? "";
+    select
+      coalesce(to_char(greatest(max(recorded_at), max(withdrawn_at), (select max(changed_at) from run_revision where team_id = ${scope.teamId})) at time zone 'UTC',
+        'YYYY-MM-DD"T"HH24:MI:SS.US"Z"'), '') as "asOf",
+      concat_ws('/', count(*), count(withdrawn_at), sum(revision), max(recorded_at)) as version
+    from run where team_id = ${scope.teamId}`);
+  return z.array(z.object({ asOf: z.string(), version: z.string() })).parse(rows)[0] ?? { asOf: "", version: "" };
 }
 
 const evidenceRunSchema = z.object({

@@ -1,11 +1,10 @@
-import { and, count, desc, eq, isNull, max, sql, type SQL } from "drizzle-orm";
+import { and, desc, eq, sql, type SQL } from "drizzle-orm";
 import type { Advice } from "@/lib/advice/advice";
 import type { Scope } from "@/lib/auth/guard";
 import type { Answers } from "@/lib/questionnaire/answers";
 import type { Questionnaire } from "@/lib/questionnaire/questionnaire-schema";
 import { user } from "../schema/auth";
 import { advice, solverCase, teamCounter } from "../schema/cases";
-import { run } from "../schema/runs";
 import type { TeamDatabase } from "../scope";
 
 /** Takes the team's next case number; its counter stays locked until the transaction ends, so numbers have no holes but those of failures. */
@@ -81,15 +80,6 @@ function whereCase(scope: Scope, ref: CaseRef): SQL | undefined {
   return and(eq(solverCase.teamId, scope.teamId), "id" in ref ? eq(solverCase.id, ref.id) : eq(solverCase.number, ref.number));
 }
 
-/** Number of runs not withdrawn, and when one was last recorded. */
-export async function caseActivity(db: TeamDatabase, scope: Scope, caseId: string): Promise<{ runs: number; lastRecordedAt: Date | null }> {
-  const [row] = await db
-    .select({ runs: count(), lastRecordedAt: max(run.recordedAt) })
-    .from(run)
-    .where(and(eq(run.teamId, scope.teamId), eq(run.caseId, caseId), isNull(run.withdrawnAt)));
-  return row ?? { runs: 0, lastRecordedAt: null };
-}
-
 export type NewAdvice = { caseId: string; sequence: number; content: Advice };
 
 export async function insertAdvice(db: TeamDatabase, scope: Scope, params: NewAdvice): Promise<{ id: string }> {
@@ -134,3 +124,28 @@ export async function listCaseAdvice(db: TeamDatabase, scope: Scope, caseId: str
     .limit(limit);
 }
 export type CaseAdviceRow = Awaited<ReturnType<typeof listCaseAdvice>>[number];
+
+export type CaseForRuns = { id: string; number: number; cores: number; adviceId: string | null };
+
+/** Cases by UUID or number, with the latest advice on each; those that are not there are missing from the answer. */
+export async function findCasesForRuns(db: TeamDatabase, scope: Scope, refs: readonly string[]): Promise<CaseForRuns[]> {
+  const ids = refs.filter((ref) => !/^\d+$/.test(ref));
+  const numbers = refs.filter((ref) => /^\d+$/.test(ref)).map(Number);
+  const latest = db
+    .select({ id: advice.id })
+    .from(advice)
+    .where(and(eq(advice.teamId, scope.teamId), eq(advice.caseId, solverCase.id)))
+    .orderBy(desc(advice.sequence))
+    .limit(1)
+    .as("latest_advice");
+  return db
+    .select({ id: solverCase.id, number: solverCase.number, cores: solverCase.cores, adviceId: latest.id })
+    .from(solverCase)
+    .leftJoinLateral(latest, sql`true`)
+    .where(
+      and(
+        eq(solverCase.teamId, scope.teamId),
+        sql`(${solverCase.id} = any(${sql.param(ids)}::uuid[]) or ${solverCase.number} = any(${sql.param(numbers)}::int[]))`,
+      ),
+    );
+}

@@ -21,7 +21,7 @@ const rowSchema = z.object({
   editionNumber: z.int(),
   firstStrategy: z.string().nullable(),
   firedRules: z.array(z.string()),
-  givenAt: z.date(),
+  givenAt: z.string(),
   advised: z.boolean(),
   runId: z.string().nullable(),
   strategyKey: z.string().nullable(),
@@ -31,7 +31,7 @@ const rowSchema = z.object({
   solveSeconds: z.number().nullable(),
   peakMemoryGiB: z.number().nullable(),
   trueRelativeResidual: z.number().nullable(),
-  measuredAt: z.date().nullable(),
+  measuredAt: z.string().nullable(),
 });
 type Row = z.infer<typeof rowSchema>;
 
@@ -84,15 +84,20 @@ function recordQuery(scope: Scope, caseIds: readonly string[] | undefined): SQL 
       (c.answers ->> 'tolerance')::float8 as tolerance, (c.answers ->> 'repeatedSolves')::float8 as "repeatedSolves",
       (c.answers #>> '{hardware,timeLimitSeconds}')::float8 as "timeLimitSeconds",
       (c.answers #>> '{hardware,nodes}')::float8 * (c.answers #>> '{hardware,memoryPerNodeGiB}')::float8 as "memoryGiB",
-      a.id as "adviceId", a.edition_number as "editionNumber", a.first_strategy as "firstStrategy", a.fired_rules as "firedRules", a.created_at as "givenAt",
+      a.id as "adviceId", a.edition_number as "editionNumber", a.first_strategy as "firstStrategy", a.fired_rules as "firedRules", ${isoInstant("a.created_at")} as "givenAt",
       coalesce(r.advised, false) as advised, r.id as "runId", r.strategy_key as "strategyKey", r.outcome, r.iterations, r.setup_seconds as "setupSeconds",
-      r.solve_seconds as "solveSeconds", r.peak_memory_gib as "peakMemoryGiB", r.true_relative_residual as "trueRelativeResidual", r.measured_at as "measuredAt"
+      r.solve_seconds as "solveSeconds", r.peak_memory_gib as "peakMemoryGiB", r.true_relative_residual as "trueRelativeResidual", ${isoInstant("r.measured_at")} as "measuredAt"
     from chosen c
     join latest l on l.case_id = c.id
     left join judged j on j.case_id = c.id
     join advice a on a.id = coalesce(j.id, l.id) and a.team_id = ${scope.teamId}
     left join compared r on r.case_id = c.id
     order by c.number, r.advised desc nulls last, r.strategy_key`;
+}
+
+/** ISO 8601 in UTC to the millisecond; `column` is one of ours. */
+function isoInstant(column: string): SQL {
+  return sql`to_char(${sql.raw(column)} at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"')`;
 }
 
 function gather(rows: readonly Row[]): HitRateRecord[] {
@@ -122,7 +127,7 @@ function recordOf(row: Row, advisedRun: ComparedRun | null, otherRuns: ComparedR
       editionNumber: row.editionNumber,
       firstStrategy: row.firstStrategy,
       firedRules: row.firedRules,
-      givenAt: row.givenAt.toISOString(),
+      givenAt: row.givenAt,
     },
     advisedRun,
     otherRuns,
@@ -141,6 +146,6 @@ function comparedRunOf(row: Row): ComparedRun | null {
     peakMemoryGiB: row.peakMemoryGiB,
     cores: row.cores,
     trueRelativeResidual: row.trueRelativeResidual,
-    measuredAt: row.measuredAt.toISOString(),
+    measuredAt: row.measuredAt,
   };
 }

@@ -1,4 +1,4 @@
-import { listEvidenceCases, listEvidenceRuns, recordInstant, type EvidenceCase, type EvidenceRun } from "@/db/queries/advice-evidence";
+import { listEvidenceCases, listEvidenceRuns, recordState, type EvidenceCase, type EvidenceRun } from "@/db/queries/advice-evidence";
 import { findRules, liveEditionNumber } from "@/db/queries/editions";
 import type { TeamDatabase } from "@/db/scope";
 import { readRecord, type Evidence, type RecordedRuns, type TimedRun } from "@/lib/advice/observations";
@@ -21,10 +21,10 @@ const readRecords = new Map<string, { key: string; basis: AdviceBasis }>();
 
 /** Throws AppError "unavailable" while the team has no edition yet. */
 export async function adviceBasis(db: TeamDatabase, scope: Scope): Promise<AdviceBasis> {
-  const asOf = await recordInstant(db, scope);
+  const { asOf, version } = await recordState(db, scope);
   const editionNumber = await liveEditionNumber(db, scope);
   if (editionNumber === null) throw new AppError("unavailable", "This team's first rulebook is being prepared; try again in a minute.");
-  const key = `${editionNumber}/${modelVersion}/${asOf}`;
+  const key = `${editionNumber}/${modelVersion}/${asOf}/${version}`;
   const known = readRecords.get(scope.teamId);
   if (known?.key === key) return known.basis;
   const basis = await readBasis(db, scope, editionNumber, asOf);

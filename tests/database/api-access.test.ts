@@ -1,0 +1,162 @@
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { defaultQuestionnaire } from "@/lib/questionnaire/default-questionnaire";
+import { operations, type OperationId } from "@/lib/api/contract";
+import type { Operation } from "@/lib/api/operation";
+import { problemMediaType } from "@/lib/api/problem";
+import { mayRole, isReadPermission, roles } from "@/lib/auth/permissions";
+import { allOperations, createdCase, fillPath, recordedRun, startApiWorld, type ApiWorld, type CallOptions, type Caller } from "../support/api";
+
+let world: ApiWorld;
+let caseId: string;
+let caseNumber: string;
+let runId: string;
+let machineId: string;
+let serial = 0;
+
+const run = { strategy: "schur-diag-direct", outcome: "converged", setupSeconds: 1, solveSeconds: 2 };
+const sheet = () => ({ name: `Sheet ${++serial}`, coresPerNode: 8, nodes: 2, memoryPerNodeGiB: 64, bandwidthPerNodeGBps: 100, gflopsPerCore: 10, networkLatencyMicroseconds: 2, networkBandwidthGBps: 10 });
+
+beforeAll(async () => {
+  world = await startApiWorld();
+  const made = await world.expect(201, createdCase, "POST", "/api/v1/cases", { body: { questionnaire: defaultQuestionnaire } });
+  caseId = made.id;
+  caseNumber = String(made.number);
+  runId = (await world.expect(201, recordedRun, "POST", `/api/v1/cases/${caseId}/runs`, { body: run })).id;
+  machineId = (await world.expect(201, operations.createMachine.response.schema, "POST", "/api/v1/machines", { body: sheet() })).id;
+});
+afterAll(() => world.close());
+
+/** A good request of every operation; a new operation without one does not compile. */
+const goodRequests: Record<OperationId, () => { params?: Record<string, string>; options?: CallOptions; query?: string }> = {
+  advise: () => ({ options: { body: defaultQuestionnaire } }),
+  createCase: () => ({ options: { body: { questionnaire: defaultQuestionnaire } } }),
+  listCases: () => ({ query: "?sort=title&limit=5" }),
+  getCase: () => ({ params: { id: caseId } }),
+  copyCase: () => ({ params: { id: caseId } }),
+  adviseAgain: () => ({ params: { id: caseId } }),
+  optionsFile: () => ({ params: { id: caseId, strategy: "direct-ldlt" } }),
+  batchScript: () => ({ params: { id: caseId, strategy: "direct-ldlt" } }),
+  exportCases: () => ({}),
+  recordRun: () => ({ params: { id: caseId }, options: { body: run } }),
+  listRuns: () => ({ params: { id: caseId } }),
+  getRun: () => ({ params: { id: runId } }),
+  correctRun: () => ({ params: { id: runId }, options: { body: { note: "seen again", explanation: "checked" } } }),
+  withdrawRun: () => ({ params: { id: runId }, options: { body: { reason: "wrong mesh" } } }),
+  importRuns: () => ({ options: { rawBody: `${JSON.stringify({ ...run, caseId })}\n`, headers: { "content-type": "application/x-ndjson" } } }),
+  listMachines: () => ({}),
+  createMachine: () => ({ options: { body: sheet() } }),
+  updateMachine: () => ({ params: { id: machineId }, options: { body: { nodes: 3 } } }),
+  deleteMachine: () => ({ params: { id: machineId } }),
+  hitRates: () => ({ query: "?degree=1" }),
+  listEditions: () => ({}),
+  getEdition: () => ({ params: { number: "1" } }),
+  listAudit: () => ({}),
+  exportTeam: () => ({ query: "?format=ndjson" }),
+};
+
+async function attempt(operation: Operation, as: Caller, change: CallOptions = {}) {
+  const id = Object.keys(operations).find((name): name is OperationId => name === operation.id);
+  if (id === undefined) throw new Error(`${operation.id} is not registered under its id.`);
+  const { params = {}, options = {}, query = "" } = goodRequests[id]();
+  return world.call(operation.method, fillPath(operation, params) + query, { ...options, ...change, as });
+}
+
+async function countAll(): Promise<string> {
+  const tables = ["solver_case", "advice", "run", "run_revision", "machine", "audit", "idempotency_key", "edition"];
+  const { rows } = await world.owner.query(tables.map((table) => `select '${table}' as name, count(*)::int as n from ${table}`).join(" union all "));
+  return JSON.stringify(rows);
+}
+
+// RFC 9110: 401 for nobody, 403 for somebody who may not; RFC 9457 for the body.
+describe.each(allOperations.map((operation) => [operation.id, operation] as const))("%s", (_id, operation) => {
+  it("is refused to somebody who is not signed in, and changes nothing", async () => {
+    const before = await countAll();
+    const answer = await attempt(operation, "nobody");
+    expect(answer.status).toBe(401);
+    expect(answer.headers.get("content-type")).toBe(problemMediaType);
+    expect(answer.problem().status).toBe(401);
+    expect(await countAll()).toBe(before);
+  });
+
+  it.each(roles.filter((role) => !mayRole(role, operation.permission)))("is refused to a member with the role %s, and changes nothing", async (role) => {
+    const before = await countAll();
+    expect((await attempt(operation, role)).status).toBe(403);
+    expect(await countAll()).toBe(before);
+  });
+
+  it("is refused to a key that may only read, unless it only reads", async () => {
+    const status = (await attempt(operation, "read-key")).status;
+    if (isReadPermission(operation.permission)) expect(status).toBe(operation.status);
+    else expect(status).toBe(403);
+  });
+
+  it("does not find another team's things", async () => {
+    const before = await countAll();
+    const answer = await attempt(operation, "foreigner");
+    if (operation.params === null) {
+      expect(answer.text).not.toContain(caseId);
+      expect(answer.text).not.toContain(runId);
+      return;
+    }
+    // Everybody has an edition 1: their own.
+    if (operation.id === "getEdition") return expect(answer.status).toBe(200);
+    expect(answer.status).toBe(404);
+    expect(answer.text).not.toContain("Olive");
+    expect(await countAll()).toBe(before);
+  });
+
+  it("refuses a method it does not have with 405 and says which it has", async () => {
+    const answer = await world.call("PUT", fillPath(operation, goodRequestParams(operation)), { body: {} });
+    expect(answer.status).toBe(405);
+    expect(answer.headers.get("allow")).toContain(operation.method);
+    expect(answer.problem().status).toBe(405);
+  });
+});
+
+function goodRequestParams(operation: Operation): Record<string, string> {
+  return operation.id === "getEdition" ? { number: "1" } : { id: caseId, strategy: "direct-ldlt" };
+}
+
+describe("every role that may", () => {
+  // Deleting and withdrawing last: they change what the others use.
+  const ordered = [...allOperations].sort((a, b) => Number(/delete|withdraw/.test(a.id)) - Number(/delete|withdraw/.test(b.id)));
+  it.each(ordered.map((operation) => [operation.id, operation] as const))("can %s", async (_id, operation) => {
+    for (const role of roles.filter((one) => mayRole(one, operation.permission))) {
+      const answer = await attempt(operation, role);
+      expect(answer.status, `${role}: ${answer.text.slice(0, 300)}`).toBe(operation.status);
+      expect(answer.headers.get("cache-control")).toBe("no-store");
+      expect(answer.headers.get("x-content-type-options")).toBe("nosniff");
+      if (operation.id === "deleteMachine") machineId = (await world.expect(201, operations.createMachine.response.schema, "POST", "/api/v1/machines", { body: sheet() })).id;
+    }
+  });
+
+  it("finds a case by its number as well", async () => {
+    expect((await world.call("GET", `/api/v1/cases/${caseNumber}`)).status).toBe(200);
+  });
+});
+
+describe("a request from another site", () => {
+  it.each([
+    ["a foreign Origin", { origin: "https://elsewhere.example" }, 403],
+    ["the Origin null", { origin: "null" }, 403],
+    ["a foreign site named by the browser", { "sec-fetch-site": "cross-site" }, 403],
+    ["our own Origin", { origin: "http://127.0.0.1:3999" }, 201],
+  ])("with a cookie and %s gets %s", async (_name, headers, status) => {
+    const answer = await attempt(operations.recordRun, "analyst", { headers });
+    expect(answer.status).toBe(status);
+  });
+
+  it("with a key is judged by the key alone", async () => {
+    expect((await attempt(operations.recordRun, "write-key", { headers: { origin: "https://elsewhere.example" } })).status).toBe(201);
+  });
+});
+
+describe("addresses that are none", () => {
+  it.each(["/api/v1/nothing", "/api/v1", "/api/v1/cases/1/runs/2/3"])("%s answers 404 as problem details", async (path) => {
+    for (const method of ["GET", "POST", "DELETE"]) {
+      const answer = await world.call(method, path);
+      expect(answer.status).toBe(404);
+      expect(answer.problem().errors).toEqual([]);
+    }
+  });
+});
