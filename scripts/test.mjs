@@ -9,7 +9,7 @@ import { makeTestFolder } from "./lib/test-folder.mjs";
 import { runBrowserPart, runDatabasePart, runUnitPart } from "./lib/test-parts.mjs";
 import { failedPart, sumCounts } from "./lib/test-report.mjs";
 
-const limitMinutes = 15;
+const limitMinutes = 60;
 const runners = { unit: runUnitPart, database: runDatabasePart, browser: runBrowserPart };
 
 process.env.NEXT_TELEMETRY_DISABLED = "1";
