@@ -4,6 +4,7 @@ import { TeamSwitcher } from "@/components/team/team-switcher";
 import { DeskShell } from "@/components/layout/desk-shell";
 import { currentPerson, requireActor } from "@/lib/auth/actor";
 import { signOutAction } from "../(public)/actions";
+import { DeskFind } from "./desk-find";
 import { switchTeamAction } from "./team/actions";
 
 const destinations = [
@@ -21,6 +22,7 @@ export default async function DeskLayout({ children }: { children: ReactNode }) 
     <DeskShell
       destinations={destinations}
       teams={<TeamSwitcher teams={teams.map(({ teamId, teamName }) => ({ id: teamId, name: teamName }))} activeId={actor.teamId} action={switchTeamAction} />}
+      find={<DeskFind />}
       person={<PersonMenu name={actor.userName} email={actor.userEmail} role={actor.role} signOut={signOutAction} />}
       demonstration={active?.demonstration ?? false}
     >

@@ -12,7 +12,7 @@ import { useActionForm } from "./use-action-form";
 /** Asks for the letter with a reset link. The answer is the same whether the address has an account or not. */
 export function ForgotPasswordForm({ action }: { action: (data: FormData) => Promise<FormResult<undefined>> }) {
   const [asked, setAsked] = useState(false);
-  const form = useActionForm({ schema: forgotPasswordSchema, defaultValues: { email: "" }, fields: ["email"], action, onDone: () => setAsked(true) });
+  const form = useActionForm({ schema: forgotPasswordSchema, fields: ["email"], action, onDone: () => setAsked(true) });
   if (asked) {
     return (
       <Notice tone="good" announce title="Look into your mail">

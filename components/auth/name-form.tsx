@@ -9,11 +9,11 @@ import { FormBody } from "./form-body";
 import { useActionForm } from "./use-action-form";
 
 export function NameForm({ name, action }: { name: string; action: (data: FormData) => Promise<FormResult<undefined>> }) {
-  const form = useActionForm({ schema: changeNameSchema, defaultValues: { name }, fields: ["name"], action, onDone: () => toast.success("The name is changed.") });
+  const form = useActionForm({ schema: changeNameSchema, fields: ["name"], action, onDone: () => toast.success("The name is changed.") });
   return (
-    <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Change the name">
+    <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Change the name" variant="plain">
       <Field label="Your name" error={form.errorOf("name")} required>
-        <Input autoComplete="name" {...form.register("name")} />
+        <Input autoComplete="name" defaultValue={name} {...form.register("name")} />
       </Field>
     </FormBody>
   );

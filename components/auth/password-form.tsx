@@ -11,7 +11,6 @@ import { useActionForm } from "./use-action-form";
 export function PasswordForm({ email, action }: { email: string; action: (data: FormData) => Promise<FormResult<undefined>> }) {
   const form = useActionForm({
     schema: changePasswordSchema,
-    defaultValues: { currentPassword: "", newPassword: "" },
     fields: ["currentPassword", "newPassword"],
     action,
     onDone: () => {
@@ -20,7 +19,7 @@ export function PasswordForm({ email, action }: { email: string; action: (data: 
     },
   });
   return (
-    <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Change the password">
+    <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Change the password" variant="plain">
       {/* Password managers look for the account's name beside the password. */}
       <input type="text" name="username" autoComplete="username" value={email} readOnly hidden />
       <Field label="Present password" error={form.errorOf("currentPassword")} required>

@@ -18,7 +18,6 @@ const invitedSchema = z.object({ name: nameField, email: emailField, password: n
 export function RegisterForm({ action }: { action: Action }) {
   const form = useActionForm({
     schema: ownTeamSchema,
-    defaultValues: { name: "", email: "", password: "", teamName: "" },
     fields: ["name", "email", "password", "teamName"],
     action,
     onDone: () => goTo("/cases"),
@@ -45,7 +44,7 @@ export function RegisterForm({ action }: { action: Action }) {
 export function InvitedRegisterForm({ email, invitationId, action }: { email: string; invitationId: string; action: Action }) {
   const form = useActionForm({
     schema: invitedSchema,
-    defaultValues: { name: "", email, password: "", invitationId },
+    fixed: { invitationId },
     fields: ["name", "email", "password"],
     action,
     onDone: () => goTo("/cases"),
@@ -56,7 +55,7 @@ export function InvitedRegisterForm({ email, invitationId, action }: { email: st
         <Input autoComplete="name" {...form.register("name")} />
       </Field>
       <Field label="E-mail" help="The invitation is for this address." error={form.errorOf("email")} required>
-        <Input type="email" autoComplete="username" readOnly {...form.register("email")} />
+        <Input type="email" autoComplete="username" readOnly defaultValue={email} {...form.register("email")} />
       </Field>
       <Field label="Password" help={`At least ${passwordMinLength} characters.`} error={form.errorOf("password")} required>
         <Input type="password" autoComplete="new-password" {...form.register("password")} />

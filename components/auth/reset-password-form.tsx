@@ -12,7 +12,7 @@ import { useActionForm } from "./use-action-form";
 export function ResetPasswordForm({ token, action }: { token: string; action: (data: FormData) => Promise<FormResult<undefined>> }) {
   const form = useActionForm({
     schema: resetPasswordSchema,
-    defaultValues: { token, password: "" },
+    fixed: { token },
     fields: ["password"],
     action,
     onDone: () => goTo("/sign-in?reset=done"),

@@ -13,7 +13,6 @@ type Props = { next: string; email?: string; action: (data: FormData) => Promise
 export function SignInForm({ next, email = "", action }: Props) {
   const form = useActionForm({
     schema: signInSchema,
-    defaultValues: { email, password: "" },
     fields: ["email", "password"],
     action,
     onDone: () => goTo(next),
@@ -21,7 +20,7 @@ export function SignInForm({ next, email = "", action }: Props) {
   return (
     <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Sign in">
       <Field label="E-mail" error={form.errorOf("email")} required>
-        <Input type="email" autoComplete="username" inputMode="email" {...form.register("email")} />
+        <Input type="email" autoComplete="username" inputMode="email" defaultValue={email} {...form.register("email")} />
       </Field>
       <Field label="Password" error={form.errorOf("password")} required>
         <Input type="password" autoComplete="current-password" {...form.register("password")} />

@@ -13,7 +13,7 @@ const schema = z.object({ teamName: teamNameField });
 
 /** Makes another team for somebody who is signed in. */
 export function TeamForm({ action }: { action: (data: FormData) => Promise<FormResult<undefined>> }) {
-  const form = useActionForm({ schema, defaultValues: { teamName: "" }, fields: ["teamName"], action, onDone: () => goTo("/cases") });
+  const form = useActionForm({ schema, fields: ["teamName"], action, onDone: () => goTo("/cases") });
   return (
     <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Make the team">
       <Field label="Team" help="You will own it and can invite others." error={form.errorOf("teamName")} required>

@@ -8,7 +8,11 @@ import type { FormResult } from "@/lib/auth/form-answer";
 
 type Options<Values extends FieldValues, Value> = {
   schema: z.ZodType<Values, Values>;
-  defaultValues: DefaultValues<Values>;
+  /**
+   * Values that have no control. Controls say their own `defaultValue`: then the server writes it too, and what somebody types
+   * before the script has loaded is kept.
+   */
+  fixed?: DefaultValues<Values>;
   /** The fields that are shown; a refusal of any other is told for the form as a whole. */
   fields: readonly Path<Values>[];
   action: (data: FormData) => Promise<FormResult<Value>>;
@@ -23,8 +27,8 @@ export type ActionForm<Values extends FieldValues> = UseFormReturn<Values, unkno
 };
 
 /** A form checked here by the same schema as on the server; the server's refusals land at their fields. */
-export function useActionForm<Values extends FieldValues, Value>({ schema, defaultValues, fields, action, onDone }: Options<Values, Value>): ActionForm<Values> {
-  const form = useForm<Values, unknown, Values>({ resolver: zodResolver(schema), defaultValues });
+export function useActionForm<Values extends FieldValues, Value>({ schema, fixed, fields, action, onDone }: Options<Values, Value>): ActionForm<Values> {
+  const form = useForm<Values, unknown, Values>({ resolver: zodResolver(schema), ...(fixed === undefined ? {} : { defaultValues: fixed }) });
   const [problem, setProblem] = useState<string | null>(null);
 
   const send = form.handleSubmit(async (values) => {

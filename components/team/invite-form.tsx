@@ -14,7 +14,6 @@ import { inviteSchema } from "@/lib/auth/team-schemas";
 export function InviteForm({ action }: { action: (data: FormData) => Promise<FormResult<undefined>> }) {
   const form = useActionForm({
     schema: inviteSchema,
-    defaultValues: { email: "", role: "analyst" },
     fields: ["email", "role"],
     action,
     onDone: () => {
@@ -23,14 +22,14 @@ export function InviteForm({ action }: { action: (data: FormData) => Promise<For
     },
   });
   return (
-    <div className="max-w-xl border-t border-hairline pt-4">
-      <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Invite">
+    <div className="max-w-xl pt-2">
+      <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Invite" variant="plain">
         <div className="grid gap-4 sm:grid-cols-[1fr_10rem]">
           <Field label="E-mail of the person to invite" error={form.errorOf("email")} required>
             <Input type="email" inputMode="email" autoComplete="off" {...form.register("email")} />
           </Field>
           <Field label="Role" error={form.errorOf("role")} required>
-            <Select {...form.register("role")}>
+            <Select defaultValue="analyst" {...form.register("role")}>
               {roles.map((role) => (
                 <option key={role}>{role}</option>
               ))}

@@ -16,7 +16,6 @@ export function KeyForm({ action }: { action: (data: FormData) => Promise<FormRe
   const [made, setMade] = useState<string | null>(null);
   const form = useActionForm({
     schema: createKeySchema,
-    defaultValues: { name: "", scope: "read" },
     fields: ["name", "scope"],
     action,
     onDone: ({ key }) => {
@@ -25,20 +24,20 @@ export function KeyForm({ action }: { action: (data: FormData) => Promise<FormRe
     },
   });
   return (
-    <div className="grid max-w-xl gap-4 border-t border-hairline pt-4">
+    <div className="grid max-w-xl gap-4 pt-2">
       {made !== null && (
         <Notice tone="good" announce title="Copy the key now">
           It is shown this once: only a hash of it is kept.
           <CodeBlock title="API key" code={made} />
         </Notice>
       )}
-      <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Make a key">
+      <FormBody send={form.send} problem={form.problem} busy={form.formState.isSubmitting} submit="Make a key" variant="plain">
         <div className="grid gap-4 sm:grid-cols-[1fr_10rem]">
           <Field label="Name of the key" help="Such as the batch job that will use it." error={form.errorOf("name")} required>
             <Input autoComplete="off" {...form.register("name")} />
           </Field>
           <Field label="May" error={form.errorOf("scope")} required>
-            <Select {...form.register("scope")}>
+            <Select defaultValue="read" {...form.register("scope")}>
               <option value="read">read</option>
               <option value="write">read and write</option>
             </Select>
