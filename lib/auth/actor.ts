@@ -1,4 +1,4 @@
-import { headers as requestHeaders } from "next/headers";
+import { cookies as requestCookies, headers as requestHeaders } from "next/headers";
 import { redirect } from "next/navigation";
 import { cache } from "react";
 import { z } from "zod";
@@ -36,8 +36,11 @@ export async function personFromHeaders(headers: Headers): Promise<Person | null
   };
 }
 
-/** The person who asks for the present page; looked up once for all its parts. */
-export const currentPerson = cache(async (): Promise<Person | null> => personFromHeaders(await requestHeaders()));
+/**
+ * The person who asks for the present page; looked up once for all its parts. By Next's cookies and not by the header: after an
+ * action that began a new session, the page is rendered in the same request, whose header still names the old one.
+ */
+export const currentPerson = cache(async (): Promise<Person | null> => personFromHeaders(new Headers({ cookie: (await requestCookies()).toString() })));
 
 /** For signed-in pages: the actor, or a redirect to sign in (and back) or, without a team, to making one. */
 export async function requireActor(): Promise<Actor> {
