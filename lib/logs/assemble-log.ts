@@ -23,7 +23,8 @@ export function assembleLog({ programs, problems, linesRead, doubled }: Input): 
   const copies = doubled ? tracker.repeatedReasons : 0;
   const mixedAt = tracker.mixedAt ?? program.secondSummaryAt;
   const programSolves = mixedAt === null ? tracker.completed - copies : null;
-  result.solves = programs.solves === null || mixedAt !== null ? null : programs.solves - copies;
+  const unstated = tracker.completed === 0 && tracker.current !== null;
+  result.solves = programs.solves === null || mixedAt !== null || unstated ? null : programs.solves - copies;
   const solve = tracker.lastComplete ?? tracker.current;
   const assembly: Assembly = { program, solve, view: solve?.view ?? tracker.loneView, programSolves, result, problems };
 

@@ -10,9 +10,6 @@ export function assembleOutcome(assembly: Assembly): void {
   const { solve, program, problems, result } = assembly;
   const failure = program.failure.failure();
   if (solve?.reason) reportReason(assembly);
-  else if (solve?.ended === true && solve.last !== null && solve.brokenAt === null) {
-    setValue(assembly, "iterations", solve.last.iteration, solve.lastLine);
-  }
   if (failure === null) return;
   const completed = program.tracker.lastComplete?.reason != null;
   if (completed && result.outcome !== null) {
@@ -31,7 +28,10 @@ function reportReason(assembly: Assembly): void {
   const { solve, result, problems } = assembly;
   const reason = solve?.reason;
   if (solve == null || reason == null) return;
-  setValue(assembly, "iterations", reason.iterations, reason.line);
+  // Residuals that end elsewhere without a gap, or go on behind the last iteration: one of the statements is damaged.
+  const last = solve.last?.iteration ?? reason.iterations;
+  const contradicted = reason.converged && (solve.brokenAt === null ? last !== reason.iterations : last > reason.iterations);
+  if (!contradicted) setValue(assembly, "iterations", reason.iterations, reason.line);
   setValue(assembly, "reason", reason.name, reason.line);
   const { name } = reason;
   if (!isConvergedReason(name) || name.startsWith("CONVERGED") !== reason.converged) {

@@ -28,7 +28,7 @@ function isWhole({ solve, problems }: Assembly): boolean {
   if (solve === null || !solve.ended || solve.brokenAt !== null || solve.last === null) return false;
   if (solve.reason === null || solve.reason.iterations === solve.last.iteration) return true;
   if (solve.reason.converged) {
-    problems.add("warning", solve.reason.line, `The solve took ${solve.reason.iterations} iterations, the last residual printed is that of ${solve.last.iteration}; the final residual is left open.`);
+    problems.add("warning", solve.reason.line, `The solve took ${solve.reason.iterations} iterations, the last residual printed is that of ${solve.last.iteration}; both are left open.`);
   }
   return false;
 }

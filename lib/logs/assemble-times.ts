@@ -29,7 +29,7 @@ export function assembleTimes(assembly: Assembly): void {
   const setup = performance.event("PCSetUp");
   const oneSetup = setup !== null && (single || (setup.calls === 1 && (solved === null || solved.calls === seen)));
   if (setup !== null && oneSetup) setValue(assembly, "setupSeconds", setup.seconds, setup.line);
-  // A solve that ended in the set-up took no time worth recording.
-  const failed = solve?.reason?.name.startsWith("DIVERGED_PC") === true;
-  if (solved !== null && single && !failed) setValue(assembly, "solveSeconds", solved.seconds, solved.line);
+  // A solve that ended in the set-up, or of which the log says no end, took no time worth recording.
+  const ended = solve?.reason != null && !solve.reason.name.startsWith("DIVERGED_PC");
+  if (solved !== null && single && ended) setValue(assembly, "solveSeconds", solved.seconds, solved.line);
 }

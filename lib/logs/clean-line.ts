@@ -16,7 +16,7 @@ export function removeTerminalCodes(line: string): string {
 }
 
 /** A line without the label a job launcher or a logger puts before it; `rank` is null where no label names one. */
-export type UnlabelledLine = { text: string; rank: number | null };
+export type UnlabelledLine = { text: string; rank: number | null; /** The line without its time stamp, rank label kept. */ unstamped: string };
 
 /**
  * Strips time stamps (`2026-12-01T04:26:27`, `04:26:27`) and rank labels (`[0] `, `0: `, `[1,0]<stdout>:`). At most one
@@ -26,8 +26,8 @@ export function removeLabel(line: string): UnlabelledLine {
   const stamped = dateAndTime.exec(line) ?? timeOnly.exec(line);
   const text = stamped === null ? line : line.slice(stamped[0].length);
   const match = openMpiTag.exec(text) ?? bracketRank.exec(text) ?? (isStageLine(text) ? null : colonRank.exec(text));
-  if (match === null) return { text, rank: null };
-  return { text: text.slice(match[0].length), rank: Number(match[1]) };
+  if (match === null) return { text, rank: null, unstamped: text };
+  return { text: text.slice(match[0].length), rank: Number(match[1]), unstamped: text };
 }
 
 /** ` 0:      Main Stage: 2.4e+00 100.0%` in a performance summary is a stage, not a rank. */

@@ -36,18 +36,22 @@ export function createFailureReader() {
   const messages: { text: string; line: number }[] = [];
   let batch: Failure | null = null;
   let banner: number | null = null;
+  let closed = false;
   let signalled: { text: string; line: number } | null = null;
   const mumpsCode: { code: number; detail: number | null; line: number }[] = [];
 
   function readPetsc(message: string, line: number, isBanner: boolean): void {
     if (isBanner) banner ??= line;
+    // Rules and stars end a message: what follows is other output.
+    else if (/^[*=-]{3}/.test(message)) closed = messages.length > 0;
+    if (closed) return;
     if (/^-+ ?Error Message|^-{10,}|^See https?:|^Configure options|^Petsc (?:Release|Development)|^\S+ on a \S* ?named /.test(message) || message === "") return;
     if (/^Caught signal number/.test(message)) signalled ??= { text: keepString(message.slice(0, 200)), line };
     const code = /INFOG?\(1\)= ?(-?\d{1,9})(?:, INFOG?\(2\)= ?(-?\d{1,18}))?$/.exec(message);
     if (code !== null && mumpsCode.length < 20) {
       mumpsCode.push({ code: Number(code[1]), detail: code[2] === undefined ? null : Number(code[2]), line });
     }
-    if (!isFrame(message) && messages.length < 12) messages.push({ text: keepString(message.slice(0, 300)), line });
+    if (!isFrame(message) && messages.length < 12 && /[a-z]/.test(message)) messages.push({ text: keepString(message.slice(0, 300)), line });
   }
 
   return {

@@ -66,10 +66,10 @@ export function createLogReader(options: LogReaderOptions = {}): LogReader {
     if (mayCarryLabel(line)) {
       const label = removeLabel(line);
       text = label.text;
-      if (label.rank !== null && label.rank > 0) return takeOtherRank(line, text, lineNumber);
+      if (label.rank !== null && label.rank > 0) return takeOtherRank(label.unstamped, text, lineNumber);
       if (text !== line && takeMonitor(text, lineNumber)) return;
       // Call stacks of errors carry a rank too; the reader of errors wants it.
-      if (label.rank !== null && line.charCodeAt(0) === 91 && !line.startsWith("[1,")) programs.current().failure.take(line, lineNumber);
+      if (/^\[\d+\]/.test(label.unstamped) && !text.startsWith("[")) programs.current().failure.take(label.unstamped, lineNumber);
     }
     programs.forLine(text, lineNumber).take(text, lineNumber);
   }

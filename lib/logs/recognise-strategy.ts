@@ -48,9 +48,10 @@ function lowRank(factor: ViewNode): "on" | "off" | "open" {
   const compressed = numberOf(factor, "INFOG(35)");
   const estimate = numberOf(factor, "INFOG(36)");
   if (asked !== null && asked >= 1 && asked <= 3) return "on";
-  if (compressed !== null && entries !== null && compressed < entries) return "on";
   if (estimate !== null && estimate > 0) return "on";
   if (asked === 0) return "off";
+  // Fewer entries than uncompressed, yet no memory estimated for compression: one of the two is damaged.
+  if (compressed !== null && entries !== null && compressed < entries) return "open";
   if (compressed !== null && estimate === 0) return "off";
   // MUMPS before 5.1 has no low-rank factorisation and prints no INFOG(35).
   return compressed === null && estimate === null && numberOf(factor, "INFOG(34)") !== null ? "off" : "open";

@@ -125,12 +125,7 @@ export function createSolveTracker(histories: HistoryPool) {
       if (view.mixed) mixedAt ??= view.line;
       const solve = current;
       if (solve === null) pendingView = view;
-      else if (solve.ended) solve.view = view;
-      else if (solve.last !== null && solve.lastLine === view.line - 1) {
-        // Without a reason, a tree printed straight after the last residual still marks the end of the solve.
-        solve.view = view;
-        complete(solve);
-      } else solve.view = view;
+      else solve.view = view;
     },
     get hasSolves() {
       return current !== null || pendingView !== null;

@@ -1,5 +1,6 @@
 import { keepString } from "@/lib/logs/keep-string";
 import { createClaim, type Claim } from "@/lib/logs/claim";
+import { factorPackages, krylovTypes, preconditionerTypes } from "@/lib/logs/solver-types";
 
 export type ViewKind = "KSP" | "PC" | "Mat";
 
@@ -106,7 +107,10 @@ const readers: Record<ViewKind, readonly Reader[]> = {
         number(node, "cols", match[2], line);
       },
     },
-    { pattern: /^package used to perform factorization: (\S{1,40})$/, read: (node, match, line) => word(node, "package", match[1], line) },
+    {
+      pattern: /^package used to perform factorization: (\S{1,40})$/,
+      read: (node, match, line) => word(node, "package", factorPackages.has(match[1] ?? "") ? match[1] : undefined, line),
+    },
     { pattern: /^total: nonzeros=(\d{1,18}), allocated nonzeros=/, read: (node, match, line) => number(node, "nonzeros", match[1], line) },
     {
       pattern: /^\((\d),(\d)\) : (NULL|(?:prefix="([^"\s]{1,200})", )?type=\w+, rows=\d+, cols=\d+)$/,
@@ -194,7 +198,8 @@ function ownerOf(stack: readonly ViewNode[], indent: number): ViewNode | null {
 function readProperty(node: ViewNode, text: string, indent: number, line: number): void {
   if (text.startsWith("type: ") && indent === node.indent + 2) {
     const type = /^type: ([\w-]{1,40})$/.exec(text);
-    if (type?.[1] !== undefined) node.type.state(keepString(type[1]), line);
+    const known = node.kind === "KSP" ? krylovTypes : node.kind === "PC" ? preconditionerTypes : null;
+    if (type?.[1] !== undefined && known?.has(type[1]) !== false) node.type.state(keepString(type[1]), line);
     return;
   }
   if (!firstLetters[node.kind].includes(text.charAt(0))) return;
