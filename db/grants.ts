@@ -17,6 +17,13 @@ export const grants = {
     idempotency_key: ["select", "insert", "update", "delete"],
     edition: ["select", "insert"],
     audit: ["select", "insert"],
+    draft: ["select", "insert", "update"],
+    replay: ["select", "insert", "update"],
+    proposal_search: ["select", "insert", "update"],
+    run_log: ["select", "insert", "update"],
+    log_mapping: ["select", "insert", "update", "delete"],
+    webhook: ["select", "insert", "update", "delete"],
+    webhook_delivery: ["select", "insert", "update"],
   },
   saddlemark_auth: {
     user: ["select", "insert", "update", "delete"],

@@ -55,6 +55,12 @@ export const solverCase = pgTable(
     cores: integer("cores").notNull(),
     machineId: uuid("machine_id"),
     demonstration: boolean("demonstration").notNull().default(false),
+    /** Name of a scaling or refinement study the case belongs to. */
+    series: text("series"),
+    /** When its author was reminded that no run was reported, once. */
+    remindedAt: timestamp("reminded_at", { withTimezone: true }),
+    /** When somebody said that no run was made. */
+    noRunAt: timestamp("no_run_at", { withTimezone: true }),
     authorId: text("author_id").references(() => user.id, { onDelete: "set null" }),
     createdAt: timestamp("created_at", { withTimezone: true }).notNull().defaultNow(),
   },

@@ -1,5 +1,7 @@
 export * from "./auth";
 export * from "./cases";
+export * from "./drafts";
+export * from "./intake";
 export * from "./roles";
 export * from "./rulebook";
 export * from "./runs";

@@ -1,5 +1,5 @@
 import { sql } from "drizzle-orm";
-import { integer, index, jsonb, pgPolicy, pgTable, text, timestamp, unique, uuid } from "drizzle-orm/pg-core";
+import { boolean, integer, index, jsonb, pgPolicy, pgTable, text, timestamp, unique, uuid } from "drizzle-orm/pg-core";
 import type { RuleSet } from "@/rules/rule-schema";
 import { organization, user } from "./auth";
 import { authRole, currentTeam, teamPolicy } from "./roles";
@@ -15,6 +15,8 @@ export const edition = pgTable(
     note: text("note").notNull().default(""),
     submittedBy: text("submitted_by").references(() => user.id, { onDelete: "set null" }),
     approvedBy: text("approved_by").references(() => user.id, { onDelete: "set null" }),
+    /** Published by the one who wrote it, in a team with a single curator. */
+    alone: boolean("alone").notNull().default(false),
     /** How it came to be: "first", "draft", "rollback:<number>". */
     origin: text("origin").notNull(),
     publishedAt: timestamp("published_at", { withTimezone: true }).notNull().defaultNow(),

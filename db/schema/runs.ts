@@ -30,6 +30,9 @@ export const run = pgTable(
     trueRelativeResidual: doublePrecision("true_relative_residual"),
     monitoredRelativeResidual: doublePrecision("monitored_relative_residual"),
     monitoredNorm: text("monitored_norm"),
+    /** L2 errors against a known solution, where there is one; for observed orders of convergence. */
+    velocityError: doublePrecision("velocity_error"),
+    pressureError: doublePrecision("pressure_error"),
     parameters: jsonb("parameters").$type<Record<string, number | string>>().notNull().default({}),
     followedAdvice: boolean("followed_advice"),
     note: text("note").notNull().default(""),
