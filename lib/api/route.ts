@@ -79,9 +79,9 @@ function checkedParts<Op extends Operation>(parts: { [Part in keyof RequestParts
   return typed as RequestParts<Op>;
 }
 
-/** An id that can't be one belongs to nothing: not found, the same as an unknown or foreign one. */
-function readParams(operation: Operation, params: Awaited<RouteContext["params"]>): unknown {
-  const parsed = (operation.params ?? z.strictObject({})).safeParse(params);
+/** An id that can't be one belongs to nothing: not found, the same as an unknown or foreign one. A path without parameters comes without any. */
+function readParams(operation: Operation, params: Awaited<RouteContext["params"]> | undefined): unknown {
+  const parsed = (operation.params ?? z.strictObject({})).safeParse(params ?? {});
   if (!parsed.success) throw new AppError("not-found", "There is nothing at this address.");
   return parsed.data;
 }
