@@ -17,7 +17,7 @@ export function BelowTheLine({ entries }: { entries: readonly RankingEntry[] }) 
         const { word, tone } = statusWords[entry.status];
         return (
           <li key={entry.strategy} className="grid gap-x-4 gap-y-1 border-b border-hairline py-2 text-sm sm:grid-cols-[minmax(0,15rem)_8.5rem_minmax(0,1fr)]" data-strategy={entry.strategy}>
-            <StrategyLabel strategy={entry.strategy} />
+            <StrategyLabel strategy={entry.strategy} className="self-start" />
             <span>
               <Badge tone={tone}>{word}</Badge>
             </span>

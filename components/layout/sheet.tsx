@@ -15,10 +15,19 @@ export function Sheet({ children, margin, className }: SheetProps) {
   );
 }
 
+type MarginProps = { children: ReactNode; label?: string; /** Stays in view beside a long form whose answers it follows. */ following?: boolean };
+
 /** The sheet's right-hand margin. Fill it with MarginSections. */
-export function Margin({ children, label = "Margin notes" }: { children: ReactNode; label?: string }) {
+export function Margin({ children, label = "Margin notes", following = false }: MarginProps) {
   return (
-    <aside aria-label={label} className="grid min-w-0 content-start gap-6 px-1 sm:grid-cols-2 lg:sticky lg:top-5 lg:max-h-[calc(100dvh-2.5rem)] lg:grid-cols-1 lg:overflow-y-auto lg:pr-2 lg:pb-2">
+    <aside
+      aria-label={label}
+      tabIndex={following ? 0 : undefined}
+      className={cn(
+        "grid min-w-0 content-start gap-6 px-1 sm:grid-cols-2 lg:grid-cols-1 lg:pr-2 lg:pb-2",
+        following && "lg:sticky lg:top-5 lg:max-h-[calc(100dvh-2.5rem)] lg:overflow-y-auto",
+      )}
+    >
       {children}
     </aside>
   );

@@ -90,7 +90,7 @@ function Desk({ team, copiedFrom, copyMissing, initial, restored, machines: load
   return (
     <Sheet
       margin={
-        <Margin label="What the answers imply">
+        <Margin label="What the answers imply" following>
           <LiveMargin sizes={checked.sizes} advice={advice.data} stale={advice.isFetching || asked !== checked.questionnaire} failure={advice.error === null ? null : problemText(advice.error)} />
           <Caution />
         </Margin>
