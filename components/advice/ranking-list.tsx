@@ -101,7 +101,7 @@ function Track({ entry, scale, measured }: { entry: RankingEntry; scale: LogScal
   const range = entry.relativeRange;
   if (range === null || entry.relativeTime === null) return null;
   const words = `${formatRatio(range.low)} to ${formatRatio(range.high)} of the first${measured === null ? "" : `, measured ${formatRatio(measured)}`}`;
-  return <RatioTrack scale={scale} low={range.low} median={entry.relativeTime} high={range.high} measured={measured} colour={strategyColours[entry.strategy]} words={words} reference={1} />;
+  return <RatioTrack scale={scale} low={range.low} median={entry.relativeTime} high={range.high} measured={measured} colour={strategyColours[entry.strategy]} mark={entry.strategy} words={words} reference={1} />;
 }
 
 /** 1x, 20x: an axis needs no decimals that are zero. */

@@ -36,12 +36,6 @@ export async function callApi<Answer>(path: string, call: Call = {}): Promise<An
   return response.json();
 }
 
-/** The same for answers that are text, such as an options file. */
-export async function callApiForText(path: string, call: Call = {}): Promise<string> {
-  const response = await send(path, call);
-  return response.text();
-}
-
 async function problemOf(response: Response): Promise<ApiProblem> {
   const body: unknown = await response.json().catch(() => null);
   const problem: Partial<{ title: unknown; detail: unknown; errors: unknown }> = typeof body === "object" && body !== null ? body : {};

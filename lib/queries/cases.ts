@@ -1,15 +1,16 @@
 import { infiniteQueryOptions, keepPreviousData, queryOptions } from "@tanstack/react-query";
 import type { Advice } from "@/lib/advice/advice";
-import type { CaseDetail, CaseSummary } from "@/lib/api/contract/cases";
+import type { CaseDetail, CaseSummary, CurveAxis, ScalingCurves, StrategyFiles } from "@/lib/api/contract/cases";
 import type { Questionnaire } from "@/lib/questionnaire/questionnaire-schema";
 import type { StrategyId } from "@/lib/shared/strategy-ids";
-import { callApi, callApiForText, searchString } from "./call-api";
+import { callApi, searchString } from "./call-api";
 
 export const caseKeys = {
   all: ["cases"] as const,
   list: (filter: Readonly<Record<string, string>>) => ["cases", "list", filter] as const,
   detail: (reference: string) => ["cases", "detail", reference] as const,
-  file: (reference: string, adviceId: string, kind: string, strategy: string) => ["cases", "detail", reference, kind, adviceId, strategy] as const,
+  files: (reference: string, adviceId: string, strategy: string) => ["case-files", reference, adviceId, strategy] as const,
+  curves: (reference: string, adviceId: string, over: string) => ["case-curves", reference, adviceId, over] as const,
 };
 
 /** Cases of one filter, page after page. Filter names and values as they stand in the address of /cases. */
@@ -33,11 +34,21 @@ export function caseQuery(reference: string) {
   });
 }
 
-/** The options file or the batch script of one strategy, as text. */
-export function strategyFileQuery(reference: string, adviceId: string, kind: "options" | "batch-script", strategy: StrategyId) {
+/** Options, recipe and batch script of one strategy under one advice. */
+export function strategyFilesQuery(reference: string, adviceId: string, strategy: StrategyId) {
   return queryOptions({
-    queryKey: caseKeys.file(reference, adviceId, kind, strategy),
-    queryFn: ({ signal }) => callApiForText(`/cases/${reference}/${kind}/${strategy}`, { signal }),
+    queryKey: caseKeys.files(reference, adviceId, strategy),
+    queryFn: ({ signal }) => callApi<StrategyFiles>(`/cases/${reference}/strategies/${strategy}`, { signal }),
+    staleTime: 5 * 60_000,
+  });
+}
+
+/** How the leading strategies of one advice scale. */
+export function scalingCurvesQuery(reference: string, adviceId: string, over: CurveAxis) {
+  return queryOptions({
+    queryKey: caseKeys.curves(reference, adviceId, over),
+    queryFn: ({ signal }) => callApi<ScalingCurves>(`/cases/${reference}/curves?over=${over}`, { signal }),
+    placeholderData: keepPreviousData,
     staleTime: 5 * 60_000,
   });
 }

@@ -36,6 +36,8 @@ const goodRequests: Record<OperationId, () => { params?: Record<string, string>;
   adviseAgain: () => ({ params: { id: caseId } }),
   optionsFile: () => ({ params: { id: caseId, strategy: "direct-ldlt" } }),
   batchScript: () => ({ params: { id: caseId, strategy: "direct-ldlt" } }),
+  strategyFiles: () => ({ params: { id: caseId, strategy: "bddc" } }),
+  scalingCurves: () => ({ params: { id: caseId }, query: "?over=unknowns" }),
   exportCases: () => ({}),
   recordRun: () => ({ params: { id: caseId }, options: { body: run } }),
   listRuns: () => ({ params: { id: caseId } }),

@@ -85,6 +85,30 @@ export type CaseDetail = z.infer<typeof caseDetailSchema>;
 
 const strategyFileParams = z.strictObject({ id: caseRefSchema, strategy: strategyIdSchema });
 
+/** All that somebody needs to run one strategy: options or the reason why there are none, the recipe in prose, the batch script. */
+export const strategyFilesSchema = z.object({
+  options: z.discriminatedUnion("kind", [
+    z.object({ kind: z.literal("petsc"), filename: z.string(), text: z.string(), callingLines: z.string().nullable() }),
+    z.object({ kind: z.literal("recipe-only"), reason: z.string() }),
+  ]),
+  recipe: z.array(z.string()),
+  batchScript: z.object({ filename: z.string(), text: z.string() }),
+});
+export type StrategyFiles = z.infer<typeof strategyFilesSchema>;
+
+export const curveAxes = ["cores", "unknowns"] as const;
+export type CurveAxis = (typeof curveAxes)[number];
+
+const curvePointSchema = z.object({ x: z.number(), low: z.number(), median: z.number(), high: z.number() });
+
+/** Predicted total seconds of the leading strategies, before rules and evidence, against cores or unknowns. */
+export const scalingCurvesSchema = z.object({
+  over: z.enum(curveAxes),
+  curves: z.array(z.object({ strategy: strategyIdSchema, points: z.array(curvePointSchema) })),
+  crossings: z.array(z.object({ x: z.number(), seconds: z.number(), faster: strategyIdSchema, slower: strategyIdSchema })),
+});
+export type ScalingCurves = z.infer<typeof scalingCurvesSchema>;
+
 export const caseOperations = {
   createCase: defineOperation({
     id: "createCase",
@@ -159,6 +183,27 @@ export const caseOperations = {
     permission: "cases:read",
     params: strategyFileParams,
     response: { kind: "other", mediaTypes: ["text/x-shellscript"], description: "The batch script" },
+  }),
+  strategyFiles: defineOperation({
+    id: "strategyFiles",
+    method: "GET",
+    path: "/api/v1/cases/{id}/strategies/{strategy}",
+    tag: "Cases",
+    summary: "Options, recipe and batch script of one strategy for the case, together",
+    permission: "cases:read",
+    params: strategyFileParams,
+    response: { kind: "json", schema: strategyFilesSchema },
+  }),
+  scalingCurves: defineOperation({
+    id: "scalingCurves",
+    method: "GET",
+    path: "/api/v1/cases/{id}/curves",
+    tag: "Cases",
+    summary: "Predicted time of the leading strategies against cores or unknowns, with the points where they cross",
+    permission: "cases:read",
+    params: caseParams,
+    query: z.strictObject({ over: z.enum(curveAxes).default("cores") }),
+    response: { kind: "json", schema: scalingCurvesSchema },
   }),
   exportCases: defineOperation({
     id: "exportCases",

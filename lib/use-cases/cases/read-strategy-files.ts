@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { findCase, listCaseAdvice } from "@/db/queries/cases";
 import { withTeam, type TeamDatabase } from "@/db/scope";
+import type { StrategyFiles } from "@/lib/api/contract/cases";
 import { caseRefSchema } from "@/lib/api/contract/common";
 import { defineUseCase, type Scope } from "@/lib/auth/guard";
 import { readAuthSettings } from "@/lib/auth/settings";
@@ -33,19 +34,33 @@ export const readBatchScript = defineUseCase({
   permission: "cases:read",
   input,
   run: ({ scope }, { caseRef, strategy }): Promise<TextFile> =>
+    withTeam(scope, async (db) => batchScriptOf(strategy, await renderStrategy(db, scope, caseRef, strategy))),
+});
+
+/** Options, recipe and batch script of one strategy in one answer. */
+export const readStrategyFiles = defineUseCase({
+  permission: "cases:read",
+  input,
+  run: ({ scope }, { caseRef, strategy }): Promise<StrategyFiles> =>
     withTeam(scope, async (db) => {
-      const { number, answers, entry, file } = await renderStrategy(db, scope, caseRef, strategy);
-      const text = batchScript({
-        caseNumber: number,
-        strategy,
-        hardware: answers.hardware,
-        totalSecondsHigh: entry.estimate.totalSeconds.high,
-        options: file.kind === "petsc" ? { filename: file.filename, text: file.text } : null,
-        baseUrl: readAuthSettings().baseUrl,
-      });
-      return { filename: `case-${number}-${strategy}.sh`, text };
+      const rendered = await renderStrategy(db, scope, caseRef, strategy);
+      return { options: rendered.file, recipe: [...rendered.recipe], batchScript: batchScriptOf(strategy, rendered) };
     }),
 });
+
+type Rendered = Awaited<ReturnType<typeof renderStrategy>>;
+
+function batchScriptOf(strategy: StrategyId, { number, answers, entry, file }: Rendered): TextFile {
+  const text = batchScript({
+    caseNumber: number,
+    strategy,
+    hardware: answers.hardware,
+    totalSecondsHigh: entry.estimate.totalSeconds.high,
+    options: file.kind === "petsc" ? { filename: file.filename, text: file.text } : null,
+    baseUrl: readAuthSettings().baseUrl,
+  });
+  return { filename: `case-${number}-${strategy}.sh`, text };
+}
 
 async function renderStrategy(db: TeamDatabase, scope: Scope, caseRef: string, strategy: StrategyId) {
   const found = await findCase(db, scope, caseRefOf(caseRef));

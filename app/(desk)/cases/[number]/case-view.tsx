@@ -2,6 +2,7 @@
 
 import { useQuery } from "@tanstack/react-query";
 import { Copy, Plus, Printer } from "lucide-react";
+import dynamic from "next/dynamic";
 import Link from "next/link";
 import { useState } from "react";
 import { AnswersSummary } from "@/components/advice/answers-summary";
@@ -23,6 +24,8 @@ import { measuredRatios } from "./measured-ratios";
 import { NearestCases } from "./nearest-cases";
 import { OptionsPanel } from "./options-panel";
 import { RunsSection } from "./runs-section";
+
+const ScalingSection = dynamic(() => import("./scaling-section").then((module) => module.ScalingSection), { ssr: false });
 
 type CaseViewProps = { reference: string; initial: CaseDetail; mayWrite: boolean };
 
@@ -82,6 +85,7 @@ export function CaseView({ reference, initial, mayWrite }: CaseViewProps) {
           <BelowTheLine entries={others} />
         </section>
       )}
+      {first !== undefined && <ScalingSection reference={reference} adviceId={detail.adviceId} />}
       <RunsSection reference={reference} detail={detail} mayWrite={mayWrite} reporting={reporting} onReporting={setReporting} />
     </Sheet>
   );
