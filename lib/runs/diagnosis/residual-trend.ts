@@ -39,7 +39,9 @@ export function findStagnation(history: readonly Point[]): Stagnation | null {
   for (let length = shortest; length <= count; length += step) {
     const tail = history.slice(count - length);
     const slope = slopeOf(tail);
-    if (!(slope > stagnationSlope)) break;
+    // Its first third must be flat too, else the tail reaches back into the fall.
+    const opening = slopeOf(tail.slice(0, Math.ceil(length / 3)));
+    if (!(slope > stagnationSlope) || !(opening > stagnationSlope)) break;
     const from = tail[0]?.iteration ?? 0;
     found = { fromIteration: from, decadesPerIteration: slope, iterations: last.iteration - from };
   }
