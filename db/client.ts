@@ -45,5 +45,7 @@ function openDatabase(account: Account): Database {
   });
   // An idle connection breaks when the server restarts; the pool replaces it. Without a listener the process would end.
   pool.on("error", () => undefined);
+  // The same for a connection that is lent out but not asking anything just then; its next statement fails and says so.
+  pool.on("connect", (client) => client.on("error", () => undefined));
   return drizzle(pool, { schema });
 }

@@ -48,7 +48,7 @@ async function main(): Promise<void> {
 // By the file's name, because bundled into another program this module must only offer its function.
 if (/^fake-smtp\.(ts|mjs)$/.test(basename(process.argv[1] ?? ""))) {
   main().catch((error: unknown) => {
-    console.error(error instanceof Error ? error.message : error);
+    console.error(error instanceof z.ZodError ? `Missing or unusable: ${error.issues.map(({ path }) => path.join(".")).join(", ")}` : error instanceof Error ? error.message : error);
     process.exitCode = 1;
   });
 }

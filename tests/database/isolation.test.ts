@@ -29,11 +29,35 @@ const rowsOf = (team: string, digit: string) => {
     `insert into run_revision (team_id, run_id, revision, before) values ('${team}', '${id(4)}', 1, '{}')`,
     `insert into idempotency_key (team_id, key, body_hash) values ('${team}', 'k', 'h')`,
     `insert into edition (id, team_id, number, rules, origin) values ('${id(5)}', '${team}', 1, '[]', 'first')`,
+    `insert into draft (id, team_id, title, based_on, rules, origin) values ('${id(7)}', '${team}', 't', 1, '[]', 'live')`,
+    `insert into replay (id, team_id, draft_id, draft_version, edition_number) values ('${id(8)}', '${team}', '${id(7)}', 1, 1)`,
+    `insert into proposal_search (id, team_id, edition_number) values ('${id(9)}', '${team}', 1)`,
+    `insert into run_log (id, team_id, case_id, bytes, sha256, parsed) values ('${id(1)}', '${team}', '${id(2)}', 1, 'h', '{}')`,
+    `insert into log_mapping (id, team_id, name, mapping) values ('${id(1)}', '${team}', 'm', '{}')`,
+    `insert into webhook (id, team_id, url, secret, events) values ('${id(1)}', '${team}', 'https://example.org', 's', '{}')`,
+    `insert into webhook_delivery (id, team_id, webhook_id, event, payload) values ('${id(2)}', '${team}', '${id(1)}', 'e', '{}')`,
     `insert into audit (id, team_id, action, subject_kind, subject_id) values ('${id(6)}', '${team}', 'a', 'k', 's')`,
   ];
 };
 
-const teamTables = ["team_counter", "machine", "solver_case", "advice", "run", "run_revision", "idempotency_key", "edition", "audit"] as const;
+const teamTables = [
+  "team_counter",
+  "machine",
+  "solver_case",
+  "advice",
+  "run",
+  "run_revision",
+  "idempotency_key",
+  "edition",
+  "audit",
+  "draft",
+  "replay",
+  "proposal_search",
+  "run_log",
+  "log_mapping",
+  "webhook",
+  "webhook_delivery",
+] as const;
 const memberTables = ["user", "organization", "member", "invitation"] as const;
 const secretTables = ["session", "account", "verification", "apikey", "throttle"] as const;
 
@@ -159,7 +183,7 @@ describe("append-only tables", () => {
   it("go with their case when an owner deletes it", async () => {
     const left = await asApp("ours", async () => {
       await app.query("delete from solver_case");
-      return (await app.query("select 1 from advice union all select 1 from run union all select 1 from run_revision")).rowCount;
+      return (await app.query("select 1 from advice union all select 1 from run union all select 1 from run_revision union all select 1 from run_log")).rowCount;
     });
     expect(left).toBe(0);
   });

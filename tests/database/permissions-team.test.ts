@@ -1,3 +1,5 @@
+import { readdirSync, readFileSync } from "node:fs";
+import { join } from "node:path";
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from "vitest";
 import type { Actor } from "@/lib/auth/guard";
 import { roles, type Role } from "@/lib/auth/permissions";
@@ -38,6 +40,13 @@ const calls: Record<string, Call> = {
   revokeKey: { call: (actor) => revokeKey(actor, { keyId: "none" }), allowed: ["owner"] },
   leaveTeam: { call: (actor) => leaveTeam(actor, {}), allowed: roles },
 };
+
+it("has a line for every use-case of the team", () => {
+  const folder = join(process.cwd(), "lib/use-cases/team");
+  const sources = readdirSync(folder).map((name) => readFileSync(join(folder, name), "utf8"));
+  const names = sources.flatMap((source) => [...source.matchAll(/export const (\w+) = defineUseCase/g)].map((match) => match[1]));
+  expect(names.sort()).toEqual(Object.keys(calls).sort());
+});
 
 const codeOf = (work: Promise<unknown>) => work.then(() => "done", (error: { code?: string }) => error.code ?? "fault");
 
