@@ -45,7 +45,8 @@ export function iterationCounts({ answers, sizes, constants, interval, variant }
       ]);
     },
     hybridised: (tolerance) => {
-      const expected = constants.hybridisedCount * (1 + constants.hybridisedDegree * (degree - 1)) * toleranceShare(tolerance);
+      const aggregated = variant.multigrid === "aggregation" ? constants.aggregationPenalty * contrast ** constants.aggregationContrast : 1;
+      const expected = constants.hybridisedCount * (1 + constants.hybridisedDegree * (degree - 1)) * aggregated * toleranceShare(tolerance);
       return plain(expected, "Expected CG iterations", "c (1 + d (k - 1))", "Level in h and contrast in the reference runs at lowest order; growth with the degree is practice", [{ name: "degree", value: degree, unit: "" }]);
     },
     auxiliarySpace: (tolerance) => {
