@@ -1,14 +1,16 @@
 import { jobDefinitions, type JobName } from "../definitions";
+import { handleDeliverWebhook } from "./deliver-webhook";
 import { handlePrepareTeam } from "./prepare-team";
 import { handleSendEmail } from "./send-email";
 
 const handlers: Record<JobName, (data: unknown) => Promise<void>> = {
   "send-email": async (data) => handleSendEmail(jobDefinitions["send-email"].payload.parse(data)),
   "prepare-team": async (data) => handlePrepareTeam(jobDefinitions["prepare-team"].payload.parse(data)),
+  "deliver-webhook": async (data) => handleDeliverWebhook(jobDefinitions["deliver-webhook"].payload.parse(data)),
 };
 
 /** Every kind of job the worker takes. */
-export const jobNames: readonly JobName[] = ["send-email", "prepare-team"];
+export const jobNames: readonly JobName[] = Object.keys(jobDefinitions).filter((name): name is JobName => name in handlers);
 
 /** Parses a job's data and does its work. Throws when the data does not fit or the work fails; the queue then tries again. */
 export function handleJob(name: JobName, data: unknown): Promise<void> {
