@@ -13,7 +13,7 @@ import type { RuleSet } from "@/rules/rule-schema";
 export type AdviceBasis = { ruleSet: RuleSet; editionNumber: number; evidence: Evidence };
 
 /** The runs recorded last speak; older ones than this many no longer do, so that advice stays quick however long the record. */
-const mostRuns = 2000;
+const mostRuns = 1000;
 const mostTeams = 50;
 
 /** Teams' records as read last. An entry is good as long as neither the record nor the edition nor the model has changed. */
