@@ -3,7 +3,7 @@ import type { ModelConstants } from "./constants";
 import type { FrontLevel, FrontTree } from "./front-model";
 import type { MachineModel } from "./machine-model";
 
-export type FactorisedMatrix = { name: string; unknowns: number; nonzeros: number; tree: FrontTree };
+export type FactorisedMatrix = { name: string; unknowns: number; nonzeros: number; tree: FrontTree; separator: { cells: number; perArea: number; thickness: number } };
 
 /**
  * Memory and time of a factorisation by its tree of fronts.
@@ -28,7 +28,7 @@ export function directCost(matrix: FactorisedMatrix, machine: MachineModel, cons
   }
   const parallelStack = 1 + constants.stackOverheadParallel * (1 - 1 / machine.cores);
   const memoryBytes = 8 * entries * constants.stackOverhead * parallelStack + 24 * matrix.nonzeros * constants.inputOverhead;
-  return { entries, flops, analysisSeconds, factorSeconds, solveSeconds, memoryBytes, why: steps(matrix, entries, flops, memoryBytes, analysisSeconds + factorSeconds) };
+  return { entries, flops, analysisSeconds, factorSeconds, solveSeconds, memoryBytes, why: steps(matrix, machine, { entries, flops, memoryBytes, analysisSeconds, factorSeconds, solveSeconds }) };
 }
 
 function levelFactorSeconds(level: FrontLevel, machine: MachineModel, constants: ModelConstants, share: { entries: number; flops: number }): number {
@@ -66,52 +66,34 @@ function lowRankShares(tree: FrontTree, constants: ModelConstants): { entries: n
   return { entries: entries / tree.entries, flops: flops / tree.flops };
 }
 
-function steps(matrix: FactorisedMatrix, entries: number, flops: number, memoryBytes: number, setupSeconds: number): CostStep[] {
-  const root = matrix.tree.levels[0];
+function steps(matrix: FactorisedMatrix, machine: MachineModel, cost: Omit<DirectCost, "why">): CostStep[] {
+  const { name, separator, tree } = matrix;
   const source = "Nested-dissection front model (George 1973; Lipton, Rose & Tarjan 1979), separator thickness fitted to reference runs";
+  const rates = "Rates of the machine sheet; analysis, assembly and substitution rates fitted to reference runs, parallel overheads are practice";
+  const step = (quantity: string, formula: string, inputs: CostStep["inputs"], value: number, unit: string, from: string): CostStep => ({
+    quantity: `${quantity} of ${name}`,
+    formula,
+    inputs,
+    value,
+    unit,
+    source: from,
+  });
+  const entries = { name: "factor entries", value: cost.entries, unit: "" };
   return [
-    {
-      quantity: `Root separator of ${matrix.name}`,
-      formula: "p = t w N^(2/3)",
-      inputs: [{ name: "unknowns of the matrix", value: matrix.unknowns, unit: "" }],
-      value: root?.pivots ?? 0,
-      unit: "unknowns",
-      source,
-    },
-    {
-      quantity: `Factor entries of ${matrix.name}`,
-      formula: "sum over levels of 2^l (p^2/2 + p b)",
-      inputs: [{ name: "levels", value: matrix.tree.levels.length, unit: "" }],
-      value: entries,
-      unit: "entries",
-      source,
-    },
-    {
-      quantity: `Factor flops of ${matrix.name}`,
-      formula: "sum over levels of 2^l (p^3/3 + p^2 b + p b^2)",
-      inputs: [{ name: "factor entries", value: entries, unit: "" }],
-      value: flops,
-      unit: "flop",
-      source,
-    },
-    {
-      quantity: `Set-up of ${matrix.name}`,
-      formula: "analysis (sequential) + sum over levels of flops / (rate x cores in use)",
-      inputs: [
-        { name: "nonzeros", value: matrix.nonzeros, unit: "" },
-        { name: "flops", value: flops, unit: "flop" },
-      ],
-      value: setupSeconds,
-      unit: "s",
-      source: "Rates of the machine sheet; analysis rates fitted to reference runs",
-    },
-    {
-      quantity: `Peak memory of ${matrix.name}`,
-      formula: "8 entries x stack overhead + input",
-      inputs: [{ name: "factor entries", value: entries, unit: "" }],
-      value: memoryBytes,
-      unit: "B",
-      source: "Stack overhead fitted to reference runs",
-    },
+    step("Root separator", "p = t w N^(2/3)", [
+      { name: "t, thickness", value: separator.thickness, unit: "" },
+      { name: "w, unknowns per N^(2/3) cells of a flat cut", value: separator.perArea, unit: "" },
+      { name: "N, cells", value: separator.cells, unit: "" },
+    ], tree.levels[0]?.pivots ?? 0, "unknowns", source),
+    step("Factor entries", "sum over levels l of 2^l (p^2/2 + p b)", [{ name: "levels", value: tree.levels.length, unit: "" }], cost.entries, "entries", source),
+    step("Factor flops", "sum over levels l of 2^l (p^3/3 + p^2 b + p b^2)", [entries], cost.flops, "flop", source),
+    step("Set-up", "analysis (sequential) + sum over levels of flops / (rate x cores in use)", [
+      { name: "nonzeros", value: matrix.nonzeros, unit: "" },
+      { name: "flops", value: cost.flops, unit: "flop" },
+      { name: "rate of a core", value: machine.flopsPerSecondPerCore, unit: "flop/s" },
+      { name: "analysis", value: cost.analysisSeconds, unit: "s" },
+    ], cost.analysisSeconds + cost.factorSeconds, "s", rates),
+    step("Substitution", "sum over levels of 16 bytes x entries / bandwidth of the cores in use + messages", [entries], cost.solveSeconds, "s", rates),
+    step("Peak memory", "8 bytes x entries x stack overhead + input", [entries], cost.memoryBytes, "B", "Stack overhead fitted to reference runs"),
   ];
 }

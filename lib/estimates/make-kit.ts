@@ -8,9 +8,10 @@ import type { CostKit, DirectCost, SpectralInterval } from "@/lib/strategies/cos
 import type { ModelConstants } from "./constants";
 import { directCost } from "./direct-cost";
 import { dissect, type FrontTree } from "./front-model";
-import { iterationCounts, residualLag } from "./iteration-counts";
+import { iterationCounts } from "./iteration-counts";
 import { machineModel, type MachineModel } from "./machine-model";
 import { multigridCost } from "./multigrid-cost";
+import { residualLag } from "./residual-lag";
 import { spectralInterval } from "./spectral-interval";
 import { subdomainCost } from "./subdomain-cost";
 import { advisedVariant, type Variant } from "./variant";
@@ -80,17 +81,12 @@ function multiplierSystem({ boundary }: Answers, sizes: Sizes): CostKit["multipl
 
 function factoriseSystem({ answers, sizes, system, machine, constants }: KitCase, lowRank: boolean, variant: Variant): DirectCost {
   const thickness = separatorThickness(variant.ordering, sizes.cells, constants);
-  const symmetric = dissect(
-    {
-      cells: sizes.cells,
-      perSeparatorArea: flatCutFacesOf(answers, sizes) * sizes.perFace,
-      perCell: sizes.perCellVelocity + sizes.perCellPressure,
-      perCellBorder: sizes.facesPerCell * sizes.perFace,
-    },
-    thickness,
-  );
+  const perSeparatorArea = flatCutFacesOf(answers, sizes) * sizes.perFace;
+  const graph = { cells: sizes.cells, perSeparatorArea, perCell: sizes.perCellVelocity + sizes.perCellPressure, perCellBorder: sizes.facesPerCell * sizes.perFace };
+  const symmetric = dissect(graph, thickness);
   const tree = variant.factorisation === "lu" ? doubled(symmetric) : symmetric;
-  return directCost({ name: "the saddle-point matrix", unknowns: system.unknowns, nonzeros: system.nonzeros, tree }, machine, constants, lowRank);
+  const separator = { cells: sizes.cells, perArea: perSeparatorArea, thickness };
+  return directCost({ name: "the saddle-point matrix", unknowns: system.unknowns, nonzeros: system.nonzeros, tree, separator }, machine, constants, lowRank);
 }
 
 /** Minimum-fill orderings find separators that are thicker, the more so the larger the mesh. */
@@ -112,16 +108,12 @@ function doubled(tree: FrontTree): FrontTree {
 function factoriseSchur({ answers, sizes, system, machine, constants }: KitCase): DirectCost {
   const layer = cellsInLayerOf(answers, sizes) * sizes.perCellPressure;
   const nodal = flatCutFacesOf(answers, sizes) * couplingPerFace(answers.discretisation, answers.degree);
-  const tree = dissect(
-    {
-      cells: sizes.cells,
-      perSeparatorArea: answers.discretisation === "vem-mixed" ? layer : Math.min(layer, nodal),
-      perCell: sizes.perCellPressure,
-      perCellBorder: (sizes.facesPerCell / 2) * sizes.perCellPressure,
-    },
-    constants.schurSeparatorThickness,
-  );
-  return directCost({ name: "the Schur complement", unknowns: system.pressureUnknowns, nonzeros: system.schurNonzeros, tree }, machine, constants, false);
+  const perSeparatorArea = answers.discretisation === "vem-mixed" ? layer : Math.min(layer, nodal);
+  const graph = { cells: sizes.cells, perSeparatorArea, perCell: sizes.perCellPressure, perCellBorder: (sizes.facesPerCell / 2) * sizes.perCellPressure };
+  const thickness = constants.schurSeparatorThickness;
+  const separator = { cells: sizes.cells, perArea: perSeparatorArea, thickness };
+  const matrix = { name: "the Schur complement", unknowns: system.pressureUnknowns, nonzeros: system.schurNonzeros, tree: dissect(graph, thickness), separator };
+  return directCost(matrix, machine, constants, false);
 }
 
 function once<T>(compute: () => T): () => T {

@@ -30,7 +30,7 @@ function shapeOf({ discretisation, meshFamily }: SpectralAnswers): CellShape {
     "truncated-octahedra": "octahedron",
     voronoi: "voronoi",
     "voronoi-relaxed": "relaxed",
-    distorted: discretisation === "vem-mixed" ? "voronoi" : "jittered",
+    distorted: discretisation === "vem-mixed" ? "distorted" : "jittered",
     imported: discretisation === "vem-mixed" ? "voronoi" : "jittered",
   } as const;
   return shapes[meshFamily];

@@ -1,6 +1,6 @@
 import { flatCutFacesOf } from "@/lib/sizes/compute-sizes";
 import type { DirectCost } from "@/lib/strategies/cost";
-import { directCost } from "./direct-cost";
+import { directCost, type FactorisedMatrix } from "./direct-cost";
 import { dissect } from "./front-model";
 import { machineModel } from "./machine-model";
 import type { KitCase } from "./make-kit";
@@ -18,22 +18,21 @@ export function subdomainCost(kind: "bddc" | "schwarz", { answers, sizes, system
   const cells = Math.max(1, sizes.cells / subdomains);
   const local = kind === "schwarz" ? Math.min(mostOverlap * cells, (Math.cbrt(cells) + 2) ** 3) : cells;
   const pressure = kind === "schwarz";
-  const tree = dissect(
-    {
-      cells: local,
-      perSeparatorArea: pressure ? sizes.perCellPressure : flatCutFacesOf(answers, sizes) * sizes.perFace,
-      perCell: sizes.perCellPressure + (pressure ? 0 : sizes.perCellVelocity),
-      perCellBorder: pressure ? 3 * sizes.perCellPressure : sizes.facesPerCell * sizes.perFace,
-    },
-    constants.separatorThickness,
-  );
+  const perArea = pressure ? sizes.perCellPressure : flatCutFacesOf(answers, sizes) * sizes.perFace;
+  const perCell = sizes.perCellPressure + (pressure ? 0 : sizes.perCellVelocity);
+  const perCellBorder = pressure ? 3 * sizes.perCellPressure : sizes.facesPerCell * sizes.perFace;
+  const thickness = constants.separatorThickness;
   const share = local / sizes.cells;
   const single = machineModel({ ...answers.hardware, cores: 1, nodes: 1 }, constants);
-  const nonzeros = (pressure ? system.schurNonzeros : system.nonzeros) * share;
-  const unknowns = (pressure ? system.pressureUnknowns : system.unknowns) * share;
-  const each = directCost({ name: "a subdomain", unknowns, nonzeros, tree }, single, constants, false);
-  const coarseTree = dissect({ cells: subdomains, perSeparatorArea: 6, perCell: 6, perCellBorder: 18 }, constants.separatorThickness);
-  const coarse = directCost({ name: "the coarse problem", unknowns: 6 * subdomains, nonzeros: 600 * subdomains, tree: coarseTree }, machine, constants, false);
+  const subdomain = {
+    name: "a subdomain",
+    unknowns: (pressure ? system.pressureUnknowns : system.unknowns) * share,
+    nonzeros: (pressure ? system.schurNonzeros : system.nonzeros) * share,
+    tree: dissect({ cells: local, perSeparatorArea: perArea, perCell, perCellBorder }, thickness),
+    separator: { cells: local, perArea, thickness },
+  };
+  const each = directCost(subdomain, single, constants, false);
+  const coarse = directCost(coarseProblem(subdomains, thickness), machine, constants, false);
   const rounds = subdomains / machine.cores;
   return {
     entries: each.entries * subdomains + coarse.entries,
@@ -44,4 +43,10 @@ export function subdomainCost(kind: "bddc" | "schwarz", { answers, sizes, system
     memoryBytes: each.memoryBytes * subdomains + coarse.memoryBytes,
     why: [...each.why.slice(1, 3), ...coarse.why.slice(1, 2)],
   };
+}
+
+/** Six unknowns a subdomain, coupled over its faces. */
+function coarseProblem(subdomains: number, thickness: number): FactorisedMatrix {
+  const tree = dissect({ cells: subdomains, perSeparatorArea: 6, perCell: 6, perCellBorder: 18 }, thickness);
+  return { name: "the coarse problem", unknowns: 6 * subdomains, nonzeros: 600 * subdomains, tree, separator: { cells: subdomains, perArea: 6, thickness } };
 }

@@ -14,5 +14,8 @@ export function residualNotes(answers: Pick<Answers, "contrast" | "boundary" | "
     const digits = Math.ceil(Math.log10(lag));
     notes.push(`The true residual lags the monitored one by about ${digits} ${digits === 1 ? "digit" : "digits"} on this mesh; the iterations are for the true one.`);
   }
+  if (answers.tolerance / lag < 1e-13) {
+    notes.push("The tolerance in the monitored norm lies below round-off: wrap the solve in a few outer steps that test the true residual.");
+  }
   return notes;
 }

@@ -1,4 +1,5 @@
 import type { CostKit, StrategyCost } from "../cost";
+import { iterationCost } from "../iteration-step";
 
 /** Krylov vectors kept before a restart. */
 const restart = 30;
@@ -12,18 +13,18 @@ export function cost(kit: CostKit, { answers }: { answers: { tolerance: number }
   const multigrid = kit.multigridOn("schur");
   const { unknowns, nonzeros } = kit.system;
   const orthogonalised = Math.min(restart, count.expected) / 2;
-  const iteration = kit.iterationSeconds({ nonzeros: 1.3 * nonzeros, unknowns, vectors: 10 + 4 * orthogonalised, reductions: 2 }) + multigrid.cycleSeconds;
+  const iteration = iterationCost(kit, { nonzeros: 1.3 * nonzeros, unknowns, vectors: 10 + 4 * orthogonalised, reductions: 2 }, { name: "one multigrid cycle", seconds: multigrid.cycleSeconds });
   return {
     iterations: count.expected,
     iterationBound: null,
     interval: kit.spectralInterval(),
     memoryBytes: kit.storageBytes(nonzeros, unknowns, 10 + 2 * restart) + multigrid.memoryBytes,
     setupSeconds: kit.streamSeconds(48 * (kit.system.velocityNonzeros + kit.system.schurNonzeros)) + multigrid.setupSeconds,
-    solveSeconds: count.expected * iteration,
+    solveSeconds: count.expected * iteration.seconds,
     factor: null,
     parameters: { restart },
     notes: [],
-    why: [...count.why, ...multigrid.why],
+    why: [...count.why, iteration.why, ...multigrid.why],
     accuracy: "block-factorised",
   };
 }

@@ -41,7 +41,7 @@ describe("Front model", () => {
 });
 
 describe("Direct solver on a machine", () => {
-  const matrix = { name: "a matrix", unknowns: 1e6, nonzeros: 3e7, tree: cubes(3e5) };
+  const matrix = { name: "a matrix", unknowns: 1e6, nonzeros: 3e7, tree: cubes(3e5), separator: { cells: 3e5, perArea: 1, thickness: 1 } };
   const on = (cores: number, lowRank = false) => directCost(matrix, machineModel(caseAnswers({ hardware: { cores, nodes: Math.ceil(cores / 32), memoryPerNodeGiB: 128 } }).hardware, constants), constants, lowRank);
 
   it("the analysis is sequential, the factorisation speeds up, never by more than the cores", () => {
@@ -58,7 +58,7 @@ describe("Direct solver on a machine", () => {
 
   it("compression saves entries and flops on large fronts and nothing on small ones", () => {
     expect(on(32, true).flops).toBeLessThan(on(32).flops);
-    const small = { name: "a small matrix", unknowns: 1e3, nonzeros: 1e4, tree: cubes(500) };
+    const small = { name: "a small matrix", unknowns: 1e3, nonzeros: 1e4, tree: cubes(500), separator: { cells: 500, perArea: 1, thickness: 1 } };
     const machine = machineModel(caseAnswers().hardware, constants);
     expect(directCost(small, machine, constants, true).entries).toBe(directCost(small, machine, constants, false).entries);
   });
