@@ -32,66 +32,67 @@ function isFrame(message: string): boolean {
   return /\(\) (?:at|line) /.test(message) || /^#\d/.test(message);
 }
 
-export function createFailureReader() {
-  const messages: { text: string; line: number }[] = [];
-  let batch: Failure | null = null;
-  let banner: number | null = null;
-  let closed = false;
-  let signalled: { text: string; line: number } | null = null;
-  const mumpsCode: { code: number; detail: number | null; line: number }[] = [];
+/** Collects what a program says when it stops otherwise than by the verdict of a linear solve. */
+export class FailureReader {
+  private readonly messages: { text: string; line: number }[] = [];
+  private batch: Failure | null = null;
+  private banner: number | null = null;
+  private closed = false;
+  private signalled: { text: string; line: number } | null = null;
+  private readonly codes: { code: number; detail: number | null; line: number }[] = [];
 
-  function readPetsc(message: string, line: number, isBanner: boolean): void {
-    if (isBanner) banner ??= line;
+  private readPetsc(message: string, line: number, isBanner: boolean): void {
+    if (isBanner) this.banner ??= line;
     // Rules and stars end a message: what follows is other output.
-    else if (/^[*=-]{3}/.test(message)) closed = messages.length > 0;
-    if (closed) return;
+    else if (/^[*=-]{3}/.test(message)) this.closed = this.messages.length > 0;
+    if (this.closed) return;
     if (/^-+ ?Error Message|^-{10,}|^See https?:|^Configure options|^Petsc (?:Release|Development)|^\S+ on a \S* ?named /.test(message) || message === "") return;
-    if (/^Caught signal number/.test(message)) signalled ??= { text: keepString(message.slice(0, 200)), line };
+    if (/^Caught signal number/.test(message)) this.signalled ??= { text: keepString(message.slice(0, 200)), line };
     const code = /INFOG?\(1\)= ?(-?\d{1,9})(?:, INFOG?\(2\)= ?(-?\d{1,18}))?$/.exec(message);
-    if (code !== null && mumpsCode.length < 20) {
-      mumpsCode.push({ code: Number(code[1]), detail: code[2] === undefined ? null : Number(code[2]), line });
+    if (code !== null && this.codes.length < 20) {
+      this.codes.push({ code: Number(code[1]), detail: code[2] === undefined ? null : Number(code[2]), line });
     }
-    if (!isFrame(message) && messages.length < 12 && /[a-z]/.test(message)) messages.push({ text: keepString(message.slice(0, 300)), line });
+    if (!isFrame(message) && this.messages.length < 12 && /[a-z]/.test(message)) this.messages.push({ text: keepString(message.slice(0, 300)), line });
   }
 
-  return {
-    /** Takes error banners of any rank and the batch system's own lines; false for all other lines. */
-    take(text: string, line: number): boolean {
-      const code = text.charCodeAt(0);
-      if (code === 91) {
-        const match = petscLine.exec(text);
-        const isBanner = text.includes("PETSC ERROR");
-        if (match !== null && (isBanner || banner !== null)) {
-          readPetsc((match[2] ?? "").trim(), line, isBanner);
-          return true;
-        }
-      }
-      const python = pythonCode.exec(text);
-      if (python !== null) {
-        banner ??= line;
+  /** Takes error banners of any rank and the batch system's own lines; false for all other lines. */
+  take(text: string, line: number): boolean {
+    const code = text.charCodeAt(0);
+    if (code === 91) {
+      const match = petscLine.exec(text);
+      const isBanner = text.includes("PETSC ERROR");
+      if (match !== null && (isBanner || this.banner !== null)) {
+        this.readPetsc((match[2] ?? "").trim(), line, isBanner);
         return true;
       }
-      if (batch !== null || text.length > 600 || !anySign.test(text)) return false;
-      const sign = signs.find(({ pattern }) => pattern.test(text));
-      if (sign !== undefined) batch = { outcome: sign.outcome, line, reason: sign.reason, text: sign.text };
-      return sign !== undefined;
-    },
-    get mumpsCode() {
-      return mumpsCode[0] ?? null;
-    },
-    failure(): Failure | null {
-      if (batch !== null) return batch;
-      if (signalled !== null && /^Caught signal number (?:15|24)/.test(signalled.text)) {
-        return { outcome: null, line: signalled.line, reason: signalled.text, text: "The program was told to end; the log does not say why." };
-      }
-      if (signalled !== null) return { outcome: "broken", line: signalled.line, reason: signalled.text, text: "The program crashed." };
-      const [first] = messages;
-      if (banner === null) return null;
-      if (first === undefined) return { outcome: "broken", line: banner, reason: "ERROR", text: "PETSc reported an error without a message." };
-      const kind = Object.entries(kinds).find(([name]) => messages.some(({ text }) => text.startsWith(name)));
-      const joined = messages.slice(0, 3).map(({ text }) => text).join(": ").slice(0, 390);
-      return { outcome: kind?.[1].outcome ?? "broken", line: first.line, reason: joined, text: kind?.[1].text ?? "PETSc stopped with an error." };
-    },
-  };
+    }
+    const python = pythonCode.exec(text);
+    if (python !== null) {
+      this.banner ??= line;
+      return true;
+    }
+    if (this.batch !== null || text.length > 600 || !anySign.test(text)) return false;
+    const sign = signs.find(({ pattern }) => pattern.test(text));
+    if (sign !== undefined) this.batch = { outcome: sign.outcome, line, reason: sign.reason, text: sign.text };
+    return sign !== undefined;
+  }
+
+  /** MUMPS' error code as PETSc passes it on. */
+  get mumpsCode(): { code: number; detail: number | null; line: number } | null {
+    return this.codes[0] ?? null;
+  }
+
+  failure(): Failure | null {
+    if (this.batch !== null) return this.batch;
+    if (this.signalled !== null && /^Caught signal number (?:15|24)/.test(this.signalled.text)) {
+      return { outcome: null, line: this.signalled.line, reason: this.signalled.text, text: "The program was told to end; the log does not say why." };
+    }
+    if (this.signalled !== null) return { outcome: "broken", line: this.signalled.line, reason: this.signalled.text, text: "The program crashed." };
+    const [first] = this.messages;
+    if (this.banner === null) return null;
+    if (first === undefined) return { outcome: "broken", line: this.banner, reason: "ERROR", text: "PETSc reported an error without a message." };
+    const kind = Object.entries(kinds).find(([name]) => this.messages.some(({ text }) => text.startsWith(name)));
+    const joined = this.messages.slice(0, 3).map(({ text }) => text).join(": ").slice(0, 390);
+    return { outcome: kind?.[1].outcome ?? "broken", line: first.line, reason: joined, text: kind?.[1].text ?? "PETSc stopped with an error." };
+  }
 }
-export type FailureReader = ReturnType<typeof createFailureReader>;

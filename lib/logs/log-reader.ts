@@ -5,7 +5,7 @@ import { readMonitorLine } from "@/lib/logs/monitor-line";
 import { emptyParsedLog, type ParsedLog } from "@/lib/logs/parsed-log";
 import { createProblemList } from "@/lib/logs/problem-list";
 import { createHistoryPool } from "@/lib/logs/residual-history";
-import { createProgramRecord, type ProgramRecord } from "@/lib/logs/program-record";
+import { ProgramRecord } from "@/lib/logs/program-record";
 
 export type LogReaderOptions = {
   /** Residuals kept of one solve; beyond it every n-th. Default 20 000. */
@@ -127,7 +127,7 @@ function continuesNumber(line: string, next: string, longest: number): boolean {
 /** The programs of a log in order; only the one being read and the last with a complete solve are kept. */
 function createProgramQueue(historyLimit: number) {
   const histories = createHistoryPool(historyLimit);
-  let current = createProgramRecord(histories, 1);
+  let current = new ProgramRecord(histories, 1);
   let best: ProgramRecord | null = null;
   let solvesBefore = 0;
   let solvesOpen = false;
@@ -140,7 +140,7 @@ function createProgramQueue(historyLimit: number) {
     }
     solvesBefore += current.tracker.completed;
     solvesOpen = solvesOpen || current.tracker.mixedAt !== null;
-    current = createProgramRecord(histories, line);
+    current = new ProgramRecord(histories, line);
   }
 
   return {

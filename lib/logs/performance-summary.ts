@@ -14,34 +14,34 @@ const ratioRow = /^(?:Time \(sec\)|Flops?):\s+(\d\.\d{3,6}e[+-]\d{2,3})\s+(\d+\.
 type EventSum = LoggedEvent & { ambiguous: boolean; stage: number };
 
 /** Reads the performance summary (`-log_view`, formerly `-log_summary`): header, totals, event table of every stage. */
-export function createPerformanceReader() {
-  let place: "before" | "header" | "table" | "after" = "before";
-  let stage = -1;
-  let flopsRatioLine: number | null = null;
-  const processes = createClaim<number>();
-  const totalSeconds = createClaim<number>();
-  const timeRatio = createClaim<number>();
-  const flopsRatio = createClaim<number>();
-  const version = createClaim<string>();
-  const events = new Map<string, EventSum>();
+export class PerformanceReader {
+  private place: "before" | "header" | "table" | "after" = "before";
+  private stage = -1;
+  private flopsRatioLine: number | null = null;
+  readonly processes = createClaim<number>();
+  private readonly totalSeconds = createClaim<number>();
+  private readonly timeRatio = createClaim<number>();
+  private readonly flopsRatio = createClaim<number>();
+  readonly version = createClaim<string>();
+  private readonly events = new Map<string, EventSum>();
 
-  function readHeader(text: string, line: number): void {
+  private readHeader(text: string, line: number): void {
     const started = startedBy.exec(text);
-    if (started !== null && processes.line === null) processes.state(Number(started[1]), line);
+    if (started !== null && this.processes.line === null) this.processes.state(Number(started[1]), line);
     const release = /^Using Petsc (?:Release Version (\d+\.\d+\.\d+)|Development (?:GIT|HG) revision: (\S{1,60}))/.exec(text);
-    if (release !== null) version.state(keepString(release[1] ?? release[2] ?? ""), line);
+    if (release !== null) this.version.state(keepString(release[1] ?? release[2] ?? ""), line);
     const ratio = ratioRow.exec(text);
     if (ratio === null) return;
     if (text.startsWith("Time")) {
-      totalSeconds.state(Number(ratio[1]), line);
-      timeRatio.state(Number(ratio[2]), line);
+      this.totalSeconds.state(Number(ratio[1]), line);
+      this.timeRatio.state(Number(ratio[2]), line);
     } else {
-      flopsRatio.state(Number(ratio[2]), line);
-      flopsRatioLine ??= line;
+      this.flopsRatio.state(Number(ratio[2]), line);
+      this.flopsRatioLine ??= line;
     }
   }
 
-  function readEvent(text: string, line: number): void {
+  private readEvent(text: string, line: number): void {
     if (!keptEvents.has(text.slice(0, text.indexOf(" ")))) return;
     const match = eventRow.exec(text);
     if (match === null) return;
@@ -49,68 +49,74 @@ export function createPerformanceReader() {
     const ratio = Number(printedRatio);
     const timeRatioOfEvent = Number.isFinite(ratio) ? ratio : 0;
     const name = keepString(piece);
-    const known = events.get(name);
+    const known = this.events.get(name);
     if (known === undefined) {
-      events.set(name, { name, calls: Number(calls), seconds: Number(seconds), timeRatio: timeRatioOfEvent, line, ambiguous: false, stage });
+      this.events.set(name, { name, calls: Number(calls), seconds: Number(seconds), timeRatio: timeRatioOfEvent, line, ambiguous: false, stage: this.stage });
       return;
     }
     // Stages are printed one after the other: a row of an earlier one cannot come again.
-    if (known.stage >= stage) {
-      known.ambiguous = known.ambiguous || known.stage !== stage || known.calls !== Number(calls) || known.seconds !== Number(seconds);
+    if (known.stage >= this.stage) {
+      known.ambiguous = known.ambiguous || known.stage !== this.stage || known.calls !== Number(calls) || known.seconds !== Number(seconds);
       return;
     }
-    known.stage = stage;
+    known.stage = this.stage;
     known.calls += Number(calls);
     known.seconds += Number(seconds);
     known.timeRatio = Math.max(known.timeRatio, timeRatioOfEvent);
   }
 
-  function readTable(text: string, line: number): void {
+  private readTable(text: string, line: number): void {
     const stageRow = /^--- Event Stage (\d{1,4}):/.exec(text);
-    if (stageRow !== null) stage = Number(stageRow[1]);
-    else if (/^(?:Object Type|Memory usage is given|====)/.test(text)) place = "after";
-    else if (stage >= 0) readEvent(text, line);
+    if (stageRow !== null) this.stage = Number(stageRow[1]);
+    else if (/^(?:Object Type|Memory usage is given|====)/.test(text)) this.place = "after";
+    else if (this.stage >= 0) this.readEvent(text, line);
   }
 
-  return {
-    /** Whether a line opens a summary. */
-    opens: (text: string) => text.charCodeAt(0) === 45 && text.includes(" PETSc Performance Summary: "),
-    take(text: string, line: number): void {
-      if (place === "before") place = "header";
-      else if (place === "header") {
-        if (/^Event +Count +Time/.test(text)) place = "table";
-        else readHeader(text, line);
-      } else if (place === "table") readTable(text, line);
-    },
-    get reading() {
-      return place === "header" || place === "table";
-    },
-    get started() {
-      return place !== "before";
-    },
-    get tableComplete() {
-      return place === "after";
-    },
-    processes,
-    version,
-    /** An event summed over the stages; null when absent, ambiguous or when the table is not complete. */
-    event(name: string): LoggedEvent | null {
-      const found = events.get(name);
-      if (place !== "after" || found === undefined || found.ambiguous) return null;
-      return { name, calls: found.calls, seconds: found.seconds, timeRatio: found.timeRatio, line: found.line };
-    },
-    isAmbiguous: (name: string) => events.get(name)?.ambiguous === true,
-    summary(): PerformanceSummary | null {
-      if (place === "before") return null;
-      const complete = place === "after" ? [...events.values()].filter((event) => !event.ambiguous) : [];
-      return {
-        totalSeconds: totalSeconds.value,
-        timeRatio: timeRatio.value,
-        flopsRatio: flopsRatio.value,
-        flopsRatioLine,
-        events: complete.map(({ name, calls, seconds, timeRatio: ratio, line }) => ({ name, calls, seconds, timeRatio: ratio, line })),
-      };
-    },
-  };
+  /** Whether a line opens a summary. */
+  opens(text: string): boolean {
+    return text.charCodeAt(0) === 45 && text.includes(" PETSc Performance Summary: ");
+  }
+
+  take(text: string, line: number): void {
+    if (this.place === "before") this.place = "header";
+    else if (this.place === "header") {
+      if (/^Event +Count +Time/.test(text)) this.place = "table";
+      else this.readHeader(text, line);
+    } else if (this.place === "table") this.readTable(text, line);
+  }
+
+  get reading(): boolean {
+    return this.place === "header" || this.place === "table";
+  }
+
+  get started(): boolean {
+    return this.place !== "before";
+  }
+
+  get tableComplete(): boolean {
+    return this.place === "after";
+  }
+
+  /** An event summed over the stages; null when absent, ambiguous or when the table is not complete. */
+  event(name: string): LoggedEvent | null {
+    const found = this.events.get(name);
+    if (this.place !== "after" || found === undefined || found.ambiguous) return null;
+    return { name, calls: found.calls, seconds: found.seconds, timeRatio: found.timeRatio, line: found.line };
+  }
+
+  isAmbiguous(name: string): boolean {
+    return this.events.get(name)?.ambiguous === true;
+  }
+
+  summary(): PerformanceSummary | null {
+    if (this.place === "before") return null;
+    const complete = this.place === "after" ? [...this.events.values()].filter((event) => !event.ambiguous) : [];
+    return {
+      totalSeconds: this.totalSeconds.value,
+      timeRatio: this.timeRatio.value,
+      flopsRatio: this.flopsRatio.value,
+      flopsRatioLine: this.flopsRatioLine,
+      events: complete.map(({ name, calls, seconds, timeRatio: ratio, line }) => ({ name, calls, seconds, timeRatio: ratio, line })),
+    };
+  }
 }
-export type PerformanceReader = ReturnType<typeof createPerformanceReader>;

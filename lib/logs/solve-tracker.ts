@@ -32,41 +32,41 @@ function isRepeat(last: MonitorLine, next: MonitorLine): boolean {
 }
 
 /** Follows the solves of one program: which line belongs to which solve of the outermost solver. */
-export function createSolveTracker(histories: HistoryPool) {
-  let outerLevel: number | null = null;
-  let current: Solve | null = null;
-  let lastComplete: Solve | null = null;
-  let pendingView: SolverView | null = null;
-  let completed = 0;
-  let repeatedReasons = 0;
-  let unfinished = 0;
-  let mixedAt: number | null = null;
+export class SolveTracker {
+  private outerLevel: number | null = null;
+  private currentSolve: Solve | null = null;
+  private lastCompleteSolve: Solve | null = null;
+  private pendingView: SolverView | null = null;
+  private completedCount = 0;
+  private repeatedReasonsCount = 0;
+  private mixedLine: number | null = null;
+
+  constructor(private readonly histories: HistoryPool) {}
 
   /** Whether a line of this depth is the outermost solver's; a shallower one discards what was taken for it. */
-  function isOutermost(level: number): boolean {
-    if (outerLevel !== null && level > outerLevel) return false;
-    if (outerLevel !== null && level < outerLevel) {
-      current = null;
-      lastComplete = null;
-      completed = 0;
-      repeatedReasons = 0;
-      unfinished = 0;
-      mixedAt = null;
+  private isOutermost(level: number): boolean {
+    if (this.outerLevel !== null && level > this.outerLevel) return false;
+    if (this.outerLevel !== null && level < this.outerLevel) {
+      this.currentSolve = null;
+      this.lastCompleteSolve = null;
+      this.completedCount = 0;
+      this.repeatedReasonsCount = 0;
+      this.mixedLine = null;
     }
-    outerLevel = level;
+    this.outerLevel = level;
     return true;
   }
 
-  function begin(line: number): Solve {
-    if (current !== null && current !== lastComplete) histories.giveBack(current.history);
-    const solve = createSolve(histories.take(), line);
-    solve.view = pendingView;
-    pendingView = null;
-    current = solve;
+  private begin(line: number): Solve {
+    if (this.currentSolve !== null && this.currentSolve !== this.lastCompleteSolve) this.histories.giveBack(this.currentSolve.history);
+    const solve = createSolve(this.histories.take(), line);
+    solve.view = this.pendingView;
+    this.pendingView = null;
+    this.currentSolve = solve;
     return solve;
   }
 
-  function continueWith(solve: Solve, entry: MonitorLine, line: number): void {
+  private continueWith(solve: Solve, entry: MonitorLine, line: number): void {
     if (solve.last === null) solve.first = entry.monitored;
     solve.last = entry;
     solve.lastLine = line;
@@ -75,82 +75,89 @@ export function createSolveTracker(histories: HistoryPool) {
     solve.history.add(entry);
   }
 
-  function complete(solve: Solve): void {
+  private complete(solve: Solve): void {
     solve.ended = true;
-    if (lastComplete !== null && lastComplete !== solve) histories.giveBack(lastComplete.history);
-    lastComplete = solve;
-    completed += 1;
+    if (this.lastCompleteSolve !== null && this.lastCompleteSolve !== solve) this.histories.giveBack(this.lastCompleteSolve.history);
+    this.lastCompleteSolve = solve;
+    this.completedCount += 1;
   }
 
-  return {
-    monitor(entry: MonitorLine, line: number): void {
-      if (!isOutermost(entry.level)) return;
-      let solve = current;
-      if (solve?.last && isRepeat(solve.last, entry)) return;
-      if (solve === null || solve.ended || (entry.iteration === 0 && solve.last !== null)) {
-        const earlier = solve !== null;
-        if (solve !== null && !solve.ended) unfinished += 1;
-        solve = begin(line);
-        if (entry.iteration !== 0) {
-          solve.brokenAt = line;
-          if (earlier) mixedAt ??= line;
-        }
-      } else if (solve.last !== null && entry.iteration !== solve.last.iteration + 1) {
-        solve.brokenAt ??= line;
-        if (entry.iteration <= solve.last.iteration) mixedAt ??= line;
-      } else if (solve.last === null && entry.iteration !== 0) solve.brokenAt ??= line;
-      continueWith(solve, entry, line);
-    },
-    reason(entry: ReasonLine, line: number): void {
-      if (isNestedPrefix(entry.prefix) || !isOutermost(entry.level)) return;
-      const previous = current;
-      const stated = previous?.reason ?? null;
-      if (stated !== null && stated.line === line - 1 && stated.name === entry.name && stated.iterations === entry.iterations) {
-        // The very same line twice: the second may be a copy, so what the monitors said still belongs to it.
-        repeatedReasons += 1;
-        completed += 1;
-        return;
+  monitor(entry: MonitorLine, line: number): void {
+    if (!this.isOutermost(entry.level)) return;
+    let solve = this.currentSolve;
+    if (solve?.last && isRepeat(solve.last, entry)) return;
+    if (solve === null || solve.ended || (entry.iteration === 0 && solve.last !== null)) {
+      const earlier = solve !== null;
+      solve = this.begin(line);
+      if (entry.iteration !== 0) {
+        solve.brokenAt = line;
+        if (earlier) this.mixedLine ??= line;
       }
-      const solve = previous === null || previous.ended ? begin(line) : previous;
-      solve.reason = { ...entry, line };
-      complete(solve);
-    },
-    setupFailure(name: string, line: number): void {
-      if (current?.reason) current.setupFailure.state(name, line);
-    },
-    trueResidual(value: number, line: number): void {
-      if (current?.ended) current.trueResidual.state(value, line);
-    },
-    view(view: SolverView): void {
-      if (view.mixed) mixedAt ??= view.line;
-      const solve = current;
-      if (solve === null) pendingView = view;
-      else solve.view = view;
-    },
-    get hasSolves() {
-      return current !== null || pendingView !== null;
-    },
-    get current() {
-      return current;
-    },
-    get lastComplete() {
-      return lastComplete;
-    },
-    get loneView() {
-      return pendingView;
-    },
-    get completed() {
-      return completed;
-    },
-    get repeatedReasons() {
-      return repeatedReasons;
-    },
-    get unfinished() {
-      return unfinished;
-    },
-    get mixedAt() {
-      return mixedAt;
-    },
-  };
+    } else if (solve.last !== null && entry.iteration !== solve.last.iteration + 1) {
+      solve.brokenAt ??= line;
+      if (entry.iteration <= solve.last.iteration) this.mixedLine ??= line;
+    } else if (solve.last === null && entry.iteration !== 0) solve.brokenAt ??= line;
+    this.continueWith(solve, entry, line);
+  }
+
+  reason(entry: ReasonLine, line: number): void {
+    if (isNestedPrefix(entry.prefix) || !this.isOutermost(entry.level)) return;
+    const previous = this.currentSolve;
+    const stated = previous?.reason ?? null;
+    if (stated !== null && stated.line === line - 1 && stated.name === entry.name && stated.iterations === entry.iterations) {
+      // The very same line twice: the second may be a copy, so what the monitors said still belongs to it.
+      this.repeatedReasonsCount += 1;
+      this.completedCount += 1;
+      return;
+    }
+    const solve = previous === null || previous.ended ? this.begin(line) : previous;
+    solve.reason = { ...entry, line };
+    this.complete(solve);
+  }
+
+  setupFailure(name: string, line: number): void {
+    if (this.currentSolve?.reason) this.currentSolve.setupFailure.state(name, line);
+  }
+
+  trueResidual(value: number, line: number): void {
+    if (this.currentSolve?.ended) this.currentSolve.trueResidual.state(value, line);
+  }
+
+  view(view: SolverView): void {
+    if (view.mixed) this.mixedLine ??= view.line;
+    const solve = this.currentSolve;
+    if (solve === null) this.pendingView = view;
+    else solve.view = view;
+  }
+
+  get hasSolves(): boolean {
+    return this.currentSolve !== null || this.pendingView !== null;
+  }
+
+  get current(): Solve | null {
+    return this.currentSolve;
+  }
+
+  get lastComplete(): Solve | null {
+    return this.lastCompleteSolve;
+  }
+
+  /** A solver view without a solve. */
+  get loneView(): SolverView | null {
+    return this.pendingView;
+  }
+
+  get completed(): number {
+    return this.completedCount;
+  }
+
+  /** Reasons that repeat the line before them. */
+  get repeatedReasons(): number {
+    return this.repeatedReasonsCount;
+  }
+
+  /** Line from which on the output of two solves is mixed, null if it is not. */
+  get mixedAt(): number | null {
+    return this.mixedLine;
+  }
 }
-export type SolveTracker = ReturnType<typeof createSolveTracker>;

@@ -135,53 +135,63 @@ function roleOf(heading: string): ViewNode["role"] {
 }
 
 /** Collects a printed solver tree line by line; at most 4 000 objects. */
-export function createViewBuilder(text: string, indent: number, line: number) {
-  const top = readViewHeader(text);
-  const base = indent;
-  const krylov = createNode(top?.kind ?? "KSP", top?.prefix ?? "", top?.processes ?? null, indent, line, "solver");
-  let preconditioner: ViewNode | null = null;
-  const stack: ViewNode[] = [krylov];
-  let heading = "";
-  let nodes = 1;
-  let lastLine = line;
-  let complete = false;
-  let mixed = false;
+export class ViewBuilder {
+  /** Column of the tree's first line. */
+  readonly base: number;
+  private readonly line: number;
+  private readonly krylov: ViewNode;
+  private readonly stack: ViewNode[];
+  private preconditioner: ViewNode | null = null;
+  private heading = "";
+  private nodes = 1;
+  private lastLine: number;
+  private complete = false;
+  private mixed = false;
 
-  function addNode(found: NonNullable<ReturnType<typeof readViewHeader>>, at: number, lineNumber: number): void {
-    while (stack.length > 0 && (stack[stack.length - 1]?.indent ?? -1) >= at) stack.pop();
-    const parent = stack[stack.length - 1];
-    const node = createNode(found.kind, found.prefix, found.processes, at, lineNumber, at === base ? "solver" : roleOf(heading));
-    if (at === base && found.kind === "PC" && preconditioner === null) preconditioner = node;
-    else if (at === base) mixed = true;
-    if (parent !== undefined && nodes < nodeLimit) parent.children.push(node);
-    nodes += 1;
-    stack.push(node);
-    if (found.kind !== "Mat" || at !== base + 2) return;
-    complete = complete || node.role === "system";
+  constructor(text: string, indent: number, line: number) {
+    const top = readViewHeader(text);
+    this.base = indent;
+    this.line = line;
+    this.lastLine = line;
+    this.krylov = createNode(top?.kind ?? "KSP", top?.prefix ?? "", top?.processes ?? null, indent, line, "solver");
+    this.stack = [this.krylov];
   }
 
-  return {
-    base,
-    /** Takes one line; false when the line no longer belongs to the tree. */
-    take(lineText: string, lineIndent: number, lineNumber: number): boolean {
-      const found = readViewHeader(lineText);
-      if (lineIndent <= base && found === null) return false;
-      if (found !== null && lineIndent === base && found.kind === "KSP" && complete) return false;
-      lastLine = lineNumber;
-      if (found !== null) {
-        addNode(found, lineIndent, lineNumber);
-        return true;
-      }
-      const next = roleOf(lineText);
-      if (next !== "other" || lineText.startsWith("KSP ")) heading = lineText;
-      const owner = ownerOf(stack, lineIndent);
-      if (owner !== null) readProperty(owner, lineText, lineIndent, lineNumber);
+  private addNode(found: NonNullable<ReturnType<typeof readViewHeader>>, at: number, lineNumber: number): void {
+    while (this.stack.length > 0 && (this.stack[this.stack.length - 1]?.indent ?? -1) >= at) this.stack.pop();
+    const parent = this.stack[this.stack.length - 1];
+    const node = createNode(found.kind, found.prefix, found.processes, at, lineNumber, at === this.base ? "solver" : roleOf(this.heading));
+    if (at === this.base && found.kind === "PC" && this.preconditioner === null) this.preconditioner = node;
+    else if (at === this.base) this.mixed = true;
+    if (parent !== undefined && this.nodes < nodeLimit) parent.children.push(node);
+    this.nodes += 1;
+    this.stack.push(node);
+    if (found.kind !== "Mat" || at !== this.base + 2) return;
+    this.complete = this.complete || node.role === "system";
+  }
+
+  /** Takes one line; false when the line no longer belongs to the tree. */
+  take(lineText: string, lineIndent: number, lineNumber: number): boolean {
+    const found = readViewHeader(lineText);
+    if (lineIndent <= this.base && found === null) return false;
+    if (found !== null && lineIndent === this.base && found.kind === "KSP" && this.complete) return false;
+    this.lastLine = lineNumber;
+    if (found !== null) {
+      this.addNode(found, lineIndent, lineNumber);
       return true;
-    },
-    finish: (): SolverView => ({ line, lastLine, krylov, preconditioner, complete, mixed }),
-  };
+    }
+    const next = roleOf(lineText);
+    if (next !== "other" || lineText.startsWith("KSP ")) this.heading = lineText;
+    const owner = ownerOf(this.stack, lineIndent);
+    if (owner !== null) readProperty(owner, lineText, lineIndent, lineNumber);
+    return true;
+  }
+
+  finish(): SolverView {
+    const { line, lastLine, krylov, preconditioner, complete, mixed } = this;
+    return { line, lastLine, krylov, preconditioner, complete, mixed };
+  }
 }
-export type ViewBuilder = ReturnType<typeof createViewBuilder>;
 
 function createNode(kind: ViewKind, prefix: string, processes: number | null, indent: number, line: number, role: ViewNode["role"]): ViewNode {
   return { kind, prefix, processes, indent, line, role, type: createClaim<string>(), numbers: null, words: null, children: [] };
