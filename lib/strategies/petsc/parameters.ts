@@ -65,18 +65,22 @@ export function advisedWorkspacePercent({ answers }: StrategyContext): number {
 
 /**
  * Whether MUMPS analyses the matrix itself (ICNTL(12) = 1) instead of a graph compressed by 2x2 pivots: up to 1.5 times faster from
- * degree 2 on and on small systems, up to 1.7 times slower at lowest order above, where at contrast it also delays so many pivots that
- * the work space runs out. From the reference runs and cubes of the same kind.
+ * degree 2 on and on small tetrahedral systems, up to 1.7 times slower at lowest order else, where at contrast it also delays so many
+ * pivots that the work space runs out. From the reference runs and model systems of the same kind.
  */
 export function advisedSymmetricAnalysis({ answers, sizes }: StrategyContext): "matrix" | "compressed" {
   if (answers.degree >= 2) return "matrix";
-  return sizes.unknowns < smallSystem && answers.contrast.ratio < 100 ? "matrix" : "compressed";
+  const smallTetrahedral = answers.meshFamily === "tetrahedra" && sizes.unknowns < smallSystem;
+  return smallTetrahedral && answers.contrast.ratio < 100 ? "matrix" : "compressed";
 }
 
-/** Nested dissection pays from about this many unknowns on; below, its analysis takes longer than the factorisation. */
+/** Nested dissection pays from about these many unknowns on; below, its analysis takes longer than it saves. */
 const smallSystem = 10_000;
-export function advisedOrdering({ sizes }: StrategyContext): Ordering {
-  return sizes.unknowns < smallSystem ? "automatic" : "metis";
+const smallTetrahedralSystem = 25_000;
+
+export function advisedOrdering({ answers, sizes }: StrategyContext): Ordering {
+  const least = answers.meshFamily === "tetrahedra" ? smallTetrahedralSystem : smallSystem;
+  return sizes.unknowns < least ? "automatic" : "metis";
 }
 
 /** Dropping tolerance of block low-rank blocks: two decades below what the outer iteration needs from one application. */

@@ -33,8 +33,8 @@ export function symmetricKrylov(context: OptionsContext, alwaysGuarded = false):
   const method = choiceParameter(context, "krylovMethod", krylovMethods, "minres");
   if (method !== "minres") return { section: longRecurrence(context, method), prefix: "" };
   const asked = choiceParameter(context, "residualTest", residualTests, "automatic");
-  const guarded = asked === "guarded" || (asked === "automatic" && (alwaysGuarded || residualThreatened(context)));
-  return guarded ? guardedMinres(context) : plainMinres(context);
+  const needsGuard = asked === "guarded" || (asked === "automatic" && (alwaysGuarded || residualThreatened(context)));
+  return needsGuard ? guardedMinres(context) : plainMinres(context);
 }
 
 /** Flexible GMRES (or GMRES from the right), which test the true residual themselves. */
@@ -86,15 +86,32 @@ function plainMinres(context: OptionsContext): KrylovPart {
   return { section: { title: "Krylov method", options }, prefix: "" };
 }
 
-/** Inner tolerance of a guarded cycle: one decade below the asked one, never below what double precision lets MINRES reach. */
+/** MINRES inside a few outer cycles. */
 function guardedMinres(context: OptionsContext): KrylovPart {
+  return guarded(context, "MINRES", [
+    { name: "ksp_ksp_type", value: "minres", why: "Inner solver: symmetric system, positive definite preconditioner." },
+  ]);
+}
+
+/** Flexible GMRES inside a few outer cycles, for preconditioners so far from normal that its own residual estimate drifts at contrast. */
+export function guardedFlexible(context: OptionsContext): KrylovPart {
+  const restart = Math.round(positiveParameter(context, "restart", advisedRestart));
+  return guarded(context, "the inner method", [
+    { name: "ksp_ksp_type", value: "fgmres", why: "Inner solver: the preconditioner is not symmetric." },
+    { name: "ksp_ksp_gmres_restart", value: restart, why: "Vectors kept before a restart, two each." },
+  ]);
+}
+
+/** Outer test on the true residual around `inner`, whose tolerance is a decade below the asked one but never below what double precision reaches. */
+function guarded(context: OptionsContext, name: string, inner: readonly OptionLine[]): KrylovPart {
   const { tolerance } = context.answers;
-  const inner = Math.min(1e-3, Math.max(1e-9, tolerance / 10));
+  const innerTolerance = Math.min(1e-3, Math.max(1e-9, tolerance / 10));
+  const stretch = Math.log(innerTolerance) / Math.log(tolerance);
   const options: OptionLine[] = [
     {
       name: "ksp_type",
       value: "fgmres",
-      why: "Contrast, boundary, units or size let MINRES report convergence while the true residual is still large. So MINRES runs inside a few outer cycles that test the true residual and repeat it on what is left.",
+      why: `Contrast, boundary, units or size let ${name} report convergence while the true residual is still large. So it runs inside a few outer cycles that test the true residual and repeat it on what is left.`,
     },
     { name: "ksp_norm_type", value: "unpreconditioned", why: "The outer test: residual of the system itself." },
     { name: "ksp_rtol", value: shortNumber(tolerance), why: "The tolerance asked for, in the true relative residual." },
@@ -103,9 +120,9 @@ function guardedMinres(context: OptionsContext): KrylovPart {
     { name: "ksp_converged_reason", why: "Outer cycles taken." },
     { name: "pc_type", value: "ksp", why: "The preconditioner of the outer cycle is a whole inner solve." },
     { name: "pc_use_amat", why: "The inner solve is with the system's matrix, also where a preconditioning matrix of its own is given." },
-    { name: "ksp_ksp_type", value: "minres", why: "Inner solver: symmetric system, positive definite preconditioner." },
-    { name: "ksp_ksp_rtol", value: shortNumber(inner), why: "Preconditioned residual of one cycle." },
-    { name: "ksp_ksp_max_it", value: iterationLimit(context, Math.log(inner) / Math.log(tolerance)), why: "Twice the high end of the estimate, for one cycle." },
+    ...inner,
+    { name: "ksp_ksp_rtol", value: shortNumber(innerTolerance), why: "Residual of one cycle, in the norm that the inner method monitors." },
+    { name: "ksp_ksp_max_it", value: iterationLimit(context, stretch), why: "Twice the high end of the estimate, for one cycle." },
     { name: "ksp_ksp_converged_reason", why: "Inner iterations: their sum is the number to report." },
   ];
   return { section: { title: "Krylov method, guarded by the true residual", options }, prefix: "ksp_" };

@@ -2,19 +2,21 @@ import type { OptionsContext, OptionsFile } from "@/lib/strategies/strategy";
 import { plainCallingLines } from "@/lib/strategies/petsc/calling-lines";
 import { scalarMultigrid } from "@/lib/strategies/petsc/multigrid-settings";
 import { choiceParameter, factorisations } from "@/lib/strategies/petsc/parameters";
-import { longRecurrence } from "@/lib/strategies/petsc/residual-test";
+import { guardedFlexible, longRecurrence, residualThreatened } from "@/lib/strategies/petsc/residual-test";
 import { kernelNotes, schurSplit } from "@/lib/strategies/petsc/schur-split";
 import { shortNumber, writeOptionsFile } from "@/lib/strategies/petsc/write-options-file";
 
 /** Flexible GMRES with the block factorisation made of diag(A) and one multigrid cycle on B diag(A)⁻¹ Bᵀ. */
 export function options(context: OptionsContext): OptionsFile {
   const factorisation = choiceParameter(context, "factorisation", factorisations, "full");
+  const krylov =
+    factorisation !== "full" && residualThreatened(context) ? guardedFlexible(context) : { section: longRecurrence(context, "fgmres"), prefix: "" };
   return writeOptionsFile({
     id: "schur-triangular",
     title: "block factorisation with the Schur complement approximation",
     context,
-    notes: [...kernelNotes(context), "Flexible GMRES tests the true residual: in the reference runs it met its tolerance at every contrast and boundary."],
-    sections: [longRecurrence(context, "fgmres"), schurSplit("", factorisation, scalarMultigrid(context))],
+    notes: [...kernelNotes(context), "Flexible GMRES tests the true residual: in the reference runs the full factorisation met its tolerance at every contrast and boundary; the triangular ones are guarded where that threatens."],
+    sections: [krylov.section, schurSplit(krylov.prefix, factorisation, scalarMultigrid(context))],
     callingLines: plainCallingLines(context),
   });
 }

@@ -63,8 +63,8 @@ describe("the advised gamma", () => {
     expect(iterationsAt(rows, gammaOf(contextOf(first))) / best).toBeLessThanOrEqual(1.15);
   });
 
-  it("covers every mesh of the sweeps: 18 of them", () => {
-    expect(sweeps()).toHaveLength(18);
+  it("covers every mesh of the sweeps: 21 of them", () => {
+    expect(sweeps()).toHaveLength(21);
   });
 
   it("is proportional to h squared and inverse to the coefficient", () => {

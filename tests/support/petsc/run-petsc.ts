@@ -2,7 +2,6 @@ import { spawnSync } from "node:child_process";
 import { existsSync, mkdtempSync, readdirSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import { fileURLToPath } from "node:url";
 import { z } from "zod";
 
 /** A system to solve: a measured one by file name, or a model one. */
@@ -31,8 +30,8 @@ export type PetscJob = { system: SystemSpec; options: string; callingLines: stri
 
 const python = "/usr/bin/python3";
 const petscFolder = "/usr/lib/petscdir";
-const driver = fileURLToPath(new URL("./solve.py", import.meta.url));
-const parallelDriver = fileURLToPath(new URL("./solve-parallel.py", import.meta.url));
+const driver = join(process.cwd(), "tests/support/petsc/solve.py");
+const parallelDriver = join(process.cwd(), "tests/support/petsc/solve-parallel.py");
 const outputSchema = z.array(z.object({ status: z.number(), output: z.string() }));
 
 /** One job; see `runPetscAll`. */
