@@ -5,26 +5,30 @@ import type { HistoryPool, ResidualHistory } from "@/lib/logs/residual-history";
 import type { SolverView } from "@/lib/logs/solver-view";
 
 /** One solve of the outermost solver, as far as the log shows it. */
-export function createSolve(history: ResidualHistory, line: number) {
-  return {
-    line,
-    history,
-    norm: createClaim<string>(),
-    first: Number.NaN,
-    last: null as MonitorLine | null,
-    /** Line of the last residual. */
-    lastLine: line,
-    /** Line where the numbering of iterations stopped making sense. */
-    brokenAt: null as number | null,
-    nonFiniteAt: null as number | null,
-    reason: null as (ReasonLine & { line: number }) | null,
-    setupFailure: createClaim<string>(),
-    view: null as SolverView | null,
-    trueResidual: createClaim<number>(),
-    ended: false,
-  };
+export class Solve {
+  readonly norm = createClaim<string>();
+  readonly setupFailure = createClaim<string>();
+  readonly trueResidual = createClaim<number>();
+  readonly history: ResidualHistory;
+  readonly line: number;
+  /** Monitored norm of the first residual. */
+  first = Number.NaN;
+  last: MonitorLine | null = null;
+  /** Line of the last residual. */
+  lastLine: number;
+  /** Line where the numbering of iterations stopped making sense. */
+  brokenAt: number | null = null;
+  nonFiniteAt: number | null = null;
+  reason: (ReasonLine & { line: number }) | null = null;
+  view: SolverView | null = null;
+  ended = false;
+
+  constructor(history: ResidualHistory, line: number) {
+    this.history = history;
+    this.line = line;
+    this.lastLine = line;
+  }
 }
-export type Solve = ReturnType<typeof createSolve>;
 
 function isRepeat(last: MonitorLine, next: MonitorLine): boolean {
   const same = Object.is(last.monitored, next.monitored) && Object.is(last.trueRelative, next.trueRelative);
@@ -59,7 +63,7 @@ export class SolveTracker {
 
   private begin(line: number): Solve {
     if (this.currentSolve !== null && this.currentSolve !== this.lastCompleteSolve) this.histories.giveBack(this.currentSolve.history);
-    const solve = createSolve(this.histories.take(), line);
+    const solve = new Solve(this.histories.take(), line);
     solve.view = this.pendingView;
     this.pendingView = null;
     this.currentSolve = solve;
