@@ -28,7 +28,8 @@ export function directCost(matrix: FactorisedMatrix, machine: MachineModel, cons
   }
   const parallelStack = 1 + constants.stackOverheadParallel * (1 - 1 / machine.cores);
   const memoryBytes = 8 * entries * constants.stackOverhead * parallelStack + 24 * matrix.nonzeros * constants.inputOverhead;
-  return { entries, flops, analysisSeconds, factorSeconds, solveSeconds, memoryBytes, why: steps(matrix, machine, { entries, flops, memoryBytes, analysisSeconds, factorSeconds, solveSeconds }) };
+  const cost = { entries, flops, analysisSeconds, factorSeconds, solveSeconds, memoryBytes };
+  return { ...cost, why: steps(matrix, machine, cost) };
 }
 
 function levelFactorSeconds(level: FrontLevel, machine: MachineModel, constants: ModelConstants, share: { entries: number; flops: number }): number {

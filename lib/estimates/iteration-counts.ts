@@ -78,7 +78,8 @@ function blockFactorised({ constants, interval, variant }: CountCase, tolerance:
   const { low, high } = interval();
   const triangular = variant.blocks === "triangular" ? constants.triangularPerFull : 1;
   const steps = conjugateGradientSteps(high / low, tolerance);
-  return count(constants.fgmresPerCg * steps * triangular, "Expected FGMRES iterations", "c x m_CG(d2 / d1), true residual", "c fitted to reference runs; spectrum in [min(1, d1), max(1, d2)] and {1}", [
+  const source = "c fitted to reference runs; spectrum in [min(1, d1), max(1, d2)] and {1}";
+  return count(constants.fgmresPerCg * steps * triangular, "Expected FGMRES iterations", "c x m_CG(d2 / d1), true residual", source, [
     named("d2 / d1", high / low),
     named("m_CG", steps),
     named("c", constants.fgmresPerCg),
@@ -113,8 +114,8 @@ function hybridised({ answers, constants, variant }: CountCase, tolerance: numbe
 function auxiliarySpace({ answers, sizes, constants }: CountCase, tolerance: number): IterationCount {
   const divisions = Math.cbrt(sizes.cells);
   const base = constants.auxiliaryCount + constants.auxiliaryGrowth * Math.log(Math.max(1, divisions / 7.3));
-  const open = answers.boundary === "pressure-somewhere" ? 0.5 : 1;
-  const expected = base * open * (1 + 0.5 * (answers.degree - 1)) * toleranceShare(tolerance);
+  const open = answers.boundary === "pressure-somewhere" ? constants.auxiliaryPressure : 1;
+  const expected = base * open * (1 + constants.auxiliaryDegree * (answers.degree - 1)) * toleranceShare(tolerance);
   return count(expected, "Expected MINRES iterations", "a + b ln(1/h), half of it with a pressure boundary", "Fitted to reference runs at lowest order", [
     named("1/h", divisions),
     named("a", constants.auxiliaryCount),
@@ -135,9 +136,9 @@ function bddc({ answers, sizes, constants }: CountCase, tolerance: number): Iter
 
 function schwarz({ answers, constants, interval }: CountCase, tolerance: number): IterationCount {
   const { low, high } = interval();
-  const schur = constants.schwarzConstant * answers.contrast.ratio ** 0.15 * answers.degree;
+  const schur = constants.schwarzConstant * answers.contrast.ratio ** constants.schwarzContrast * answers.degree;
   const expected = constants.minresPerCg * conjugateGradientSteps((high / low) * Math.sqrt(schur), tolerance);
-  return count(expected, "Expected MINRES iterations", "c m_CG(sqrt(C contrast^0.15 k) d2 / d1)", "Form of two-level Schwarz theory, constants are practice", [
+  return count(expected, "Expected MINRES iterations", "c m_CG(sqrt(C contrast^e k) d2 / d1)", "Form of two-level Schwarz theory, constants are practice", [
     named("d2 / d1", high / low),
     named("contrast", answers.contrast.ratio),
     named("C", constants.schwarzConstant),
@@ -145,8 +146,13 @@ function schwarz({ answers, constants, interval }: CountCase, tolerance: number)
 }
 
 function pMultigrid({ answers, constants }: CountCase, tolerance: number): IterationCount {
-  const expected = constants.pMultigridCount * (1 + 0.1 * (answers.degree - 1)) * answers.contrast.ratio ** 0.05 * toleranceShare(tolerance);
-  return count(expected, "Expected FGMRES iterations", "c (1 + 0.1 (k - 1)) contrast^0.05", "Practice, no source", [named("degree", answers.degree), named("c", constants.pMultigridCount)]);
+  const growth = (1 + constants.pMultigridDegree * (answers.degree - 1)) * answers.contrast.ratio ** constants.pMultigridContrast;
+  const expected = constants.pMultigridCount * growth * toleranceShare(tolerance);
+  return count(expected, "Expected FGMRES iterations", "c (1 + d (k - 1)) contrast^e", "Practice, no source", [
+    named("degree", answers.degree),
+    named("contrast", answers.contrast.ratio),
+    named("c", constants.pMultigridCount),
+  ]);
 }
 
 function toleranceShare(tolerance: number): number {

@@ -19,7 +19,8 @@ export function multigridCost(block: MultigridBlock, machine: MachineModel, cons
   const bytes = 12 * block.nonzeros * complexity;
   const latency = machine.cores > 1 ? levels * constants.multigridPerLevelSyncs * machine.latencySeconds * (1 + Math.log2(machine.cores)) : 0;
   const cycleSeconds = machine.streamSeconds(bytes * block.sweeps, bytes) + latency;
-  const setupSeconds = (setupPerNonzero * block.nonzeros * complexity * (1 + 0.1 * Math.log2(machine.cores))) / machine.cores + 20 * latency;
+  const work = setupPerNonzero * block.nonzeros * complexity * (1 + constants.multigridSetupPerDoubling * Math.log2(machine.cores));
+  const setupSeconds = work / machine.cores + constants.multigridSetupCycles * latency;
   const memoryBytes = 1.5 * bytes + 16 * block.unknowns;
   return {
     setupSeconds,

@@ -10,7 +10,7 @@ type Entry = { intervals: readonly Interval[]; computed: readonly number[]; sour
 
 /**
  * Smallest and largest eigenvalue of diag(A_K)^-1 A_K over the cells K, by element, shape and degree (the first entry is degree 1). Degrees listed in `computed`
- * come from local matrices and are recomputed by the tests (lib/numerics/elements); they hold for every mesh of such cells and any coefficient that is
+ * come from local matrices (lib/numerics/elements; the tests compute the quick ones again); they hold for every mesh of such cells and any coefficient that is
  * constant in each. The others are taken from assembled reference systems or carried on, and bound nothing.
  */
 export function elementInterval(discretisation: Discretisation, degree: number, shape: CellShape): SpectralInterval {

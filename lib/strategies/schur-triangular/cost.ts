@@ -13,7 +13,8 @@ export function cost(kit: CostKit, { answers }: { answers: { tolerance: number }
   const multigrid = kit.multigridOn("schur");
   const { unknowns, nonzeros } = kit.system;
   const orthogonalised = Math.min(restart, count.expected) / 2;
-  const iteration = iterationCost(kit, { nonzeros: 1.3 * nonzeros, unknowns, vectors: 10 + 4 * orthogonalised, reductions: 2 }, { name: "one multigrid cycle", seconds: multigrid.cycleSeconds });
+  const traffic = { nonzeros: 1.3 * nonzeros, unknowns, vectors: 10 + 4 * orthogonalised, reductions: 2 };
+  const iteration = iterationCost(kit, traffic, { name: "one multigrid cycle", seconds: multigrid.cycleSeconds });
   return {
     iterations: count.expected,
     iterationBound: null,

@@ -9,7 +9,8 @@ export function cost(kit: CostKit, { answers }: StrategyContext): StrategyCost {
   const count = kit.iterations.schwarz(monitoredTolerance);
   const factor = kit.subdomains("schwarz");
   const { unknowns, nonzeros } = kit.system;
-  const iteration = iterationCost(kit, { nonzeros, unknowns, vectors: 12, reductions: 2 }, { name: "one substitution a subdomain and one on the coarse level", seconds: factor.solveSeconds });
+  const traffic = { nonzeros, unknowns, vectors: 12, reductions: 2 };
+  const iteration = iterationCost(kit, traffic, { name: "one substitution a subdomain and one on the coarse level", seconds: factor.solveSeconds });
   return {
     iterations: count.expected,
     iterationBound: null,

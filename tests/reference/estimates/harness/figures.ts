@@ -1,4 +1,5 @@
 import { constants, fittedConstants } from "@/lib/estimates/constants";
+import { residualLag } from "@/lib/estimates/residual-lag";
 import { advisedGamma } from "@/lib/strategies/regularisation";
 import { computeSizes } from "@/lib/sizes/compute-sizes";
 import { caseOf, predict, predictCount, type RunCase } from "./predict-run";
@@ -47,6 +48,17 @@ export function iterationComparisons(cases: readonly RunCase[], strategies: read
     const { iterations } = runCase.run;
     if (!strategies.includes(runCase.strategy) || iterations === null) return [];
     return [{ runCase, ratio: predictCount(runCase).expected / iterations }];
+  });
+}
+
+/** Lag of the true residual behind the monitored one, MINRES with a diagonal Schur preconditioner, right-hand sides with wells. */
+export function lagComparisons(cases: readonly RunCase[]): Comparison[] {
+  return cases.flatMap((runCase) => {
+    const { run, answers, strategy, variant } = runCase;
+    const diagonal = strategy === "schur-diag-direct" || strategy === "schur-diag-amg";
+    if (!diagonal || variant.krylov !== "minres" || run.rhs !== "wells" || run.true_rel_residual === null) return [];
+    const { lag } = residualLag("block-diagonal", { answers, sizes: computeSizes(answers), constants });
+    return [{ runCase, ratio: lag / Math.max(1, run.true_rel_residual / run.rtol) }];
   });
 }
 

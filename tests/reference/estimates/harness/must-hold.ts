@@ -11,6 +11,7 @@ import {
   gammaSweeps,
   growthExponents,
   iterationComparisons,
+  lagComparisons,
   pairsCalledRight,
   shareWithin,
   shareWithinPart,
@@ -48,8 +49,10 @@ function directFigures(cases: readonly RunCase[]): Figure[] {
 function iterationFigures(cases: readonly RunCase[]): Figure[] {
   const counts = iterationComparisons(cases, ["schur-diag-direct", "schur-diag-amg"]);
   const { checked, above } = aboveBound(cases);
+  const lags = lagComparisons(cases);
   return [
     atLeast(`Iterations of the diagonal-Schur strategies within 30 % (share of ${counts.length} runs)`, shareWithinPart(counts, 0.3), 0.8),
+    atLeast(`Lag of the true residual within a factor 10 (share of ${lags.length} MINRES runs with wells)`, shareWithin(lags, 10), 0.8),
     atMost(`Runs above the proven bound (of ${checked} where it applies)`, above.length, 0),
   ];
 }
@@ -104,6 +107,7 @@ function tradeFigures(): Figure[] {
     const answers = caseAnswers({ hardware: { cores, nodes: 1, memoryPerNodeGiB: 128 } });
     return estimateAll(answers, computeSizes(answers))[strategy].iterations.median;
   };
+  const growth = (strategy: "schur-diag-direct" | "regularized-amg") => iterationsOn(32, strategy) / iterationsOn(1, strategy);
   return [
     { name: "Direct over diagonal Schur, 31^3 cubes, degree 1, 32 cores", value: first, lowest: 3, highest: 8 },
     { name: "Direct over diagonal Schur, 22^3 cubes, degree 2, 32 cores", value: second, lowest: 1.3, highest: 3 },
@@ -111,8 +115,8 @@ function tradeFigures(): Figure[] {
     atMost("Advantage at degree 3 over degree 2", third / second, 1),
     atLeast("Advantage on truncated octahedra over cubes, degree 1", fourteen / six, 1),
     atLeast("Advantage on Voronoi cells over truncated octahedra, degree 1", random / fourteen, 1),
-    { name: "Iterations of diagonal Schur, 32 processes over 1", value: iterationsOn(32, "schur-diag-direct") / iterationsOn(1, "schur-diag-direct"), lowest: 1, highest: 1 },
-    { name: "Iterations of the regularised strategy, 32 processes over 1", value: iterationsOn(32, "regularized-amg") / iterationsOn(1, "regularized-amg"), lowest: 1.001, highest: 1.5 },
+    { name: "Iterations of diagonal Schur, 32 processes over 1", value: growth("schur-diag-direct"), lowest: 1, highest: 1 },
+    { name: "Iterations of the regularised strategy, 32 processes over 1", value: growth("regularized-amg"), lowest: 1.001, highest: 1.5 },
   ];
 }
 
