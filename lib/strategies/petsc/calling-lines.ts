@@ -3,7 +3,7 @@ import type { OptionsContext } from "@/lib/strategies/strategy";
 /** Names that every block of calling lines may use; the program defines them before. */
 const given = [
   "# Saddlemark: calling lines for petsc4py. In C the same calls are MatSetNullSpace, KSPSetOperators and so on.",
-  "# Given by the program: PETSc, numpy as np; K = [[A, Bt], [B, 0]] assembled, velocity unknowns first; n_u, n_p; b; ksp, not yet set up.",
+  "# Given by the program: PETSc, numpy as np; K = [[A, Bt], [B, 0]] assembled, velocity unknowns first; n_u, n_p; b; x; ksp, not yet set up.",
 ];
 
 /** The kernel (0, 1) of K, for flux boundaries; nothing where a pressure boundary fixes it. Assumes a basis in which the pressure 1 has all coefficients 1. */
