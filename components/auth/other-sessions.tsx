@@ -1,7 +1,7 @@
 "use client";
 
 import { useTransition } from "react";
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { Button } from "@/components/ui/button";
 import type { FormResult } from "@/lib/auth/form-answer";
 
@@ -10,8 +10,8 @@ export function OtherSessions({ action }: { action: () => Promise<FormResult<und
   function end(): void {
     start(async () => {
       const result = await action();
-      if (result.ok) toast.success("All other sessions are signed out.");
-      else toast.error(result.message);
+      if (result.ok) notify("All other sessions are signed out.", "success");
+      else notify(result.message, "error");
     });
   }
   return (

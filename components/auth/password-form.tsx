@@ -1,6 +1,6 @@
 "use client";
 
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { Field } from "@/components/ui/field";
 import { Input } from "@/components/ui/input";
 import { changePasswordSchema, passwordMinLength } from "@/lib/auth/account-schemas";
@@ -14,7 +14,7 @@ export function PasswordForm({ email, action }: { email: string; action: (data: 
     fields: ["currentPassword", "newPassword"],
     action,
     onDone: () => {
-      toast.success("The password is changed. Other sessions are signed out.");
+      notify("The password is changed. Other sessions are signed out.", "success");
       form.reset();
     },
   });

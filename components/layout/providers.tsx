@@ -4,7 +4,6 @@ import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
 import { ThemeProvider } from "next-themes";
 import { useState, type ReactNode } from "react";
 import { Toaster } from "@/components/ui/toaster";
-import { TooltipProvider } from "@/components/ui/tooltip";
 
 /** What every page needs around it in the browser. `nonce` lets the theme's inline script pass the content security policy. */
 export function Providers({ nonce, children }: { nonce: string | undefined; children: ReactNode }) {
@@ -12,7 +11,7 @@ export function Providers({ nonce, children }: { nonce: string | undefined; chil
   return (
     <ThemeProvider attribute="class" defaultTheme="system" enableSystem disableTransitionOnChange {...(nonce === undefined ? {} : { nonce })}>
       <QueryClientProvider client={queryClient}>
-        <TooltipProvider delayDuration={300}>{children}</TooltipProvider>
+        {children}
         <Toaster />
       </QueryClientProvider>
     </ThemeProvider>

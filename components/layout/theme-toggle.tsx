@@ -2,9 +2,9 @@
 
 import { Monitor, Moon, Sun, type LucideIcon } from "lucide-react";
 import { useTheme } from "next-themes";
-import { useSyncExternalStore } from "react";
+import { lazy, useSyncExternalStore } from "react";
 import { Button } from "@/components/ui/button";
-import { DropdownMenu, DropdownMenuContent, DropdownMenuRadioGroup, DropdownMenuRadioItem, DropdownMenuTrigger } from "@/components/ui/dropdown-menu";
+import { LazyMenu } from "@/components/ui/lazy-menu";
 
 const themes = ["system", "light", "dark"] as const;
 type Theme = (typeof themes)[number];
@@ -14,6 +14,10 @@ const looks: Record<Theme, { label: string; icon: LucideIcon }> = {
   light: { label: "Light", icon: Sun },
   dark: { label: "Dark", icon: Moon },
 };
+
+const ThemeMenuContent = lazy(() => import("./theme-menu-content"));
+
+const choices = themes.map((value) => ({ value, label: looks[value].label }));
 
 const never = (): (() => void) => () => undefined;
 
@@ -28,22 +32,10 @@ export function ThemeToggle() {
   );
   const current = themes.find((candidate) => candidate === theme) ?? "system";
   const Icon = looks[inBrowser ? current : "system"].icon;
-  return (
-    <DropdownMenu>
-      <DropdownMenuTrigger asChild>
-        <Button variant="quiet" size="icon" aria-label="Theme">
-          <Icon aria-hidden />
-        </Button>
-      </DropdownMenuTrigger>
-      <DropdownMenuContent align="end">
-        <DropdownMenuRadioGroup value={current} onValueChange={setTheme}>
-          {themes.map((candidate) => (
-            <DropdownMenuRadioItem key={candidate} value={candidate}>
-              {looks[candidate].label}
-            </DropdownMenuRadioItem>
-          ))}
-        </DropdownMenuRadioGroup>
-      </DropdownMenuContent>
-    </DropdownMenu>
+  const button = (
+    <Button variant="quiet" size="icon" aria-label="Theme">
+      <Icon aria-hidden />
+    </Button>
   );
+  return <LazyMenu button={button}>{(trigger) => <ThemeMenuContent trigger={trigger} themes={choices} current={current} setTheme={setTheme} />}</LazyMenu>;
 }

@@ -3,7 +3,8 @@ import { RatioTrack, TrackAxis } from "@/components/charts/ratio-track";
 import { Badge } from "@/components/ui/badge";
 import { Quantity, QuantityRange } from "@/components/ui/quantity";
 import { formatRatio, type QuantityUnit } from "@/lib/shared/format";
-import { residualTexts, type ComparedQuantity, type RunComparison } from "@/lib/runs/comparison";
+import type { ComparedQuantity, RunComparison } from "@/lib/runs/comparison";
+import { residualTexts } from "@/lib/runs/residual-status";
 
 const quantities: Record<ComparedQuantity, { name: string; unit: QuantityUnit }> = {
   totalSeconds: { name: "Total time", unit: "seconds" },

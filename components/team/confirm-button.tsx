@@ -1,7 +1,7 @@
 "use client";
 
 import { useState, useTransition } from "react";
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { AlertDialog, AlertDialogAction, AlertDialogCancel, AlertDialogContent, AlertDialogDescription, AlertDialogTitle, AlertDialogTrigger } from "@/components/ui/alert-dialog";
 import { Button } from "@/components/ui/button";
 import { DialogActions } from "@/components/ui/dialog";
@@ -29,10 +29,10 @@ export function ConfirmButton({ label, accessibleLabel, title, text, act, done, 
       const result = await act();
       setOpen(false);
       if (!result.ok) {
-        toast.error(result.message);
+        notify(result.message, "error");
         return;
       }
-      toast.success(done);
+      notify(done, "success");
       onDone?.();
     });
   }

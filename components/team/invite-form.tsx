@@ -1,6 +1,6 @@
 "use client";
 
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { FormBody } from "@/components/auth/form-body";
 import { useActionForm } from "@/components/auth/use-action-form";
 import { Field } from "@/components/ui/field";
@@ -17,7 +17,7 @@ export function InviteForm({ action }: { action: (data: FormData) => Promise<For
     fields: ["email", "role"],
     action,
     onDone: () => {
-      toast.success("The invitation is on its way.");
+      notify("The invitation is on its way.", "success");
       form.reset();
     },
   });

@@ -1,7 +1,7 @@
 "use client";
 
 import { useTransition } from "react";
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { Badge } from "@/components/ui/badge";
 import { Select } from "@/components/ui/select";
 import { Table, TableBody, TableCell, TableHead, TableHeader, TableRow } from "@/components/ui/table";
@@ -71,8 +71,8 @@ function RoleSelect({ member, changeRole }: { member: Member; changeRole: Props[
   function change(role: string): void {
     start(async () => {
       const result = await changeRole(member.userId, role);
-      if (result.ok) toast.success(`${member.name} is ${role} now.`);
-      else toast.error(result.message);
+      if (result.ok) notify(`${member.name} is ${role} now.`, "success");
+      else notify(result.message, "error");
     });
   }
   return (

@@ -1,7 +1,10 @@
 import { z } from "zod";
 import type { Estimate } from "@/lib/estimates/estimate";
 import { rangeSchema, type Range } from "@/lib/shared/range";
+import { residualStatuses, residualTexts, type ResidualStatus } from "./residual-status";
 import type { Outcome } from "./run";
+
+export { residualStatuses, residualTexts, type ResidualStatus } from "./residual-status";
 
 /** A run's true relative residual may be this many times the tolerance asked for and still count as converged. */
 export const residualAllowance = 10;
@@ -27,16 +30,6 @@ export type CaseLimits = {
   timeLimitSeconds: number | null;
   memoryGiB: number;
   cores: number;
-};
-
-export const residualStatuses = ["verified", "not-verified", "own-test-only", "not-reached"] as const;
-export type ResidualStatus = (typeof residualStatuses)[number];
-
-export const residualTexts: Record<ResidualStatus, string> = {
-  verified: "The true residual meets the tolerance.",
-  "not-verified": "Residual not verified: no true residual was recorded.",
-  "own-test-only": "Met only the residual it monitors: its true residual is above 10 times the tolerance, so it is not a success.",
-  "not-reached": "Did not converge.",
 };
 
 export const comparedQuantities = ["iterations", "memoryGiB", "setupSeconds", "solveSeconds", "totalSeconds"] as const;

@@ -3,7 +3,7 @@
 import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query";
 import { Plus } from "lucide-react";
 import { useState } from "react";
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { EmptyState } from "@/components/layout/empty-state";
 import { PageTitle } from "@/components/layout/page-title";
 import { Margin, MarginSection, Sheet } from "@/components/layout/sheet";
@@ -57,7 +57,7 @@ function EditSheet({ machine, onDone }: { machine: MachineView | null; onDone: (
     mutationFn: (sheet: Machine) => (machine === null ? callApi<MachineView>("/machines", { method: "POST", body: sheet }) : callApi<MachineView>(`/machines/${machine.id}`, { method: "PATCH", body: sheet })),
     onSuccess: async () => {
       await queryClient.invalidateQueries({ queryKey: machineKeys.all });
-      toast("The machine sheet was saved.");
+      notify("The machine sheet was saved.");
       onDone();
     },
   });
@@ -85,11 +85,11 @@ function DeleteSheet({ machine, onDone }: { machine: MachineView; onDone: () => 
     mutationFn: () => callApi<unknown>(`/machines/${machine.id}`, { method: "DELETE" }),
     onSuccess: async () => {
       await queryClient.invalidateQueries({ queryKey: machineKeys.all });
-      toast("The machine sheet was deleted.");
+      notify("The machine sheet was deleted.");
       onDone();
     },
     onError: (error) => {
-      toast(problemText(error));
+      notify(problemText(error));
       onDone();
     },
   });

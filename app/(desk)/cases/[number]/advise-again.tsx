@@ -2,7 +2,7 @@
 
 import { useMutation, useQueryClient } from "@tanstack/react-query";
 import { RefreshCw } from "lucide-react";
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { Button } from "@/components/ui/button";
 import { callApi, problemText } from "@/lib/queries/call-api";
 import { caseKeys } from "@/lib/queries/cases";
@@ -14,9 +14,9 @@ export function AdviseAgain({ reference }: { reference: string }) {
     mutationFn: () => callApi<{ changes: unknown[] }>(`/cases/${reference}/advice`, { method: "POST" }),
     onSuccess: async ({ changes }) => {
       await queryClient.invalidateQueries({ queryKey: caseKeys.all });
-      toast(changes.length === 0 ? "New advice: it says the same as before." : "New advice: what changed stands above the ranking.");
+      notify(changes.length === 0 ? "New advice: it says the same as before." : "New advice: what changed stands above the ranking.");
     },
-    onError: (error) => toast(problemText(error)),
+    onError: (error) => notify(problemText(error)),
   });
   return (
     <Button onClick={() => again.mutate()} disabled={again.isPending}>

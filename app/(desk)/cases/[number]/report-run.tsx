@@ -2,7 +2,7 @@
 
 import { useMutation, useQueryClient } from "@tanstack/react-query";
 import { useMemo, useState } from "react";
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { RunForm } from "@/components/runs/run-form";
 import { runFormOf } from "@/components/runs/run-form-values";
 import { Dialog, DialogContent, DialogDescription, DialogTitle } from "@/components/ui/dialog";
@@ -32,7 +32,7 @@ export function ReportRun({ reference, detail, correcting, onDone }: ReportRunPr
     },
     onSuccess: async (id) => {
       await Promise.all([queryClient.invalidateQueries({ queryKey: caseKeys.all }), queryClient.invalidateQueries({ queryKey: hitRateKeys.all })]);
-      toast(correcting ? "The run was corrected; its former values are kept." : "The run was recorded.");
+      notify(correcting ? "The run was corrected; its former values are kept." : "The run was recorded.");
       onDone(id);
     },
   });

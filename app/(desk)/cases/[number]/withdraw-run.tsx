@@ -2,7 +2,7 @@
 
 import { useMutation, useQueryClient } from "@tanstack/react-query";
 import { useState } from "react";
-import { toast } from "sonner";
+import { notify } from "@/components/ui/notify";
 import { Button } from "@/components/ui/button";
 import { Dialog, DialogActions, DialogContent, DialogDescription, DialogTitle } from "@/components/ui/dialog";
 import { Field } from "@/components/ui/field";
@@ -20,7 +20,7 @@ export function WithdrawRun({ run, onDone }: { reference: string; run: RunView; 
     mutationFn: () => callApi<unknown>(`/runs/${run.id}/withdraw`, { method: "POST", body: { reason } }),
     onSuccess: async () => {
       await Promise.all([queryClient.invalidateQueries({ queryKey: caseKeys.all }), queryClient.invalidateQueries({ queryKey: hitRateKeys.all })]);
-      toast("The run was withdrawn. It stays on record and no longer counts.");
+      notify("The run was withdrawn. It stays on record and no longer counts.");
       onDone();
     },
   });
