@@ -29,3 +29,9 @@ export function textResponse({ text, mediaType, filename }: { text: string; medi
   const safeName = filename.replace(/[^A-Za-z0-9._-]/g, "-");
   return new Response(text, { headers: { ...apiHeaders, "content-type": `${mediaType}; charset=utf-8`, "content-disposition": `attachment; filename="${safeName}"` } });
 }
+
+/** A gzipped archive as a file. */
+export function archiveResponse({ bytes, filename }: { bytes: Uint8Array<ArrayBuffer>; filename: string }): Response {
+  const safeName = filename.replace(/[^A-Za-z0-9._-]/g, "-");
+  return new Response(bytes, { headers: { ...apiHeaders, "content-type": "application/gzip", "content-disposition": `attachment; filename="${safeName}"` } });
+}

@@ -11,6 +11,8 @@ export const jobSchemaName = "jobs";
 export const jobDefinitions = {
   "send-email": { payload: emailSchema, retryLimit: 8, retryDelaySeconds: 5, expireSeconds: 120 },
   "prepare-team": { payload: z.strictObject({ teamId: z.string().min(1), ownerId: z.string().min(1) }), retryLimit: 8, retryDelaySeconds: 5, expireSeconds: 120 },
+  // Nine tries with doubled pauses reach over about an hour and a half: a receiver may restart in between.
+  "deliver-webhook": { payload: z.strictObject({ teamId: z.string().min(1), deliveryId: z.uuid() }), retryLimit: 8, retryDelaySeconds: 20, expireSeconds: 60 },
 } as const;
 
 export type JobName = keyof typeof jobDefinitions;

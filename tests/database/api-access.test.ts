@@ -11,10 +11,21 @@ let caseId: string;
 let caseNumber: string;
 let runId: string;
 let machineId: string;
+let loggedRunId: string;
+let mappingId: string;
+let webhookId: string;
 let serial = 0;
 
 const run = { strategy: "schur-diag-direct", outcome: "converged", setupSeconds: 1, solveSeconds: 2 };
 const sheet = () => ({ name: `Sheet ${++serial}`, coresPerNode: 8, nodes: 2, memoryPerNodeGiB: 64, bandwidthPerNodeGBps: 100, gflopsPerCore: 10, networkLatencyMicroseconds: 2, networkBandwidthGBps: 10 });
+const solverLog = "  0 KSP Residual norm 1.000000000000e+00\n  1 KSP Residual norm 1.000000000000e-09\nLinear solve converged due to CONVERGED_RTOL iterations 1\n";
+const format = () => ({ name: `Format ${++serial}`, quantities: { iterations: { by: "pattern", pattern: "took (\\d+) steps" } } });
+// An address of the public internet; nothing is sent, because no worker runs here.
+const hook = () => ({ url: "https://9.9.9.9/hook", events: ["run.recorded"] });
+const makers = {
+  mapping: async () => (await world.expect(201, operations.createLogMapping.response.schema, "POST", "/api/v1/log-mappings", { body: format() })).id,
+  webhook: async () => (await world.expect(201, operations.createWebhook.response.schema, "POST", "/api/v1/webhooks", { body: hook() })).id,
+};
 
 beforeAll(async () => {
   world = await startApiWorld();
@@ -23,6 +34,13 @@ beforeAll(async () => {
   caseNumber = String(made.number);
   runId = (await world.expect(201, recordedRun, "POST", `/api/v1/cases/${caseId}/runs`, { body: run })).id;
   machineId = (await world.expect(201, operations.createMachine.response.schema, "POST", "/api/v1/machines", { body: sheet() })).id;
+  const logged = await world.expect(201, operations.readLog.response.schema, "POST", `/api/v1/cases/${caseId}/logs?strategy=schur-diag-direct&outcome=converged`, {
+    rawBody: solverLog,
+    headers: { "content-type": "text/plain" },
+  });
+  loggedRunId = logged.runId ?? "none";
+  mappingId = await makers.mapping();
+  webhookId = await makers.webhook();
 });
 afterAll(() => world.close());
 
@@ -44,6 +62,19 @@ const goodRequests: Record<OperationId, () => { params?: Record<string, string>;
   getRun: () => ({ params: { id: runId } }),
   correctRun: () => ({ params: { id: runId }, options: { body: { note: "seen again", explanation: "checked" } } }),
   withdrawRun: () => ({ params: { id: runId }, options: { body: { reason: "wrong mesh" } } }),
+  readLog: () => ({ params: { id: caseId }, options: { rawBody: solverLog, headers: { "content-type": "text/plain" } }, query: "?strategy=schur-diag-direct&outcome=converged" }),
+  getRunLog: () => ({ params: { id: loggedRunId } }),
+  recordRuns: () => ({ params: { id: caseId }, options: { body: [run, run] } }),
+  listLogMappings: () => ({}),
+  createLogMapping: () => ({ options: { body: format() } }),
+  updateLogMapping: () => ({ params: { id: mappingId }, options: { body: format() } }),
+  deleteLogMapping: () => ({ params: { id: mappingId } }),
+  benchPack: () => ({ params: { id: caseId }, query: "?strategies=direct-ldlt,schur-diag-amg" }),
+  listWebhooks: () => ({}),
+  createWebhook: () => ({ options: { body: hook() } }),
+  updateWebhook: () => ({ params: { id: webhookId }, options: { body: { enabled: true } } }),
+  deleteWebhook: () => ({ params: { id: webhookId } }),
+  listDeliveries: () => ({ params: { id: webhookId } }),
   importRuns: () => ({ options: { rawBody: `${JSON.stringify({ ...run, caseId })}\n`, headers: { "content-type": "application/x-ndjson" } } }),
   listMachines: () => ({}),
   createMachine: () => ({ options: { body: sheet() } }),
@@ -64,7 +95,7 @@ async function attempt(operation: Operation, as: Caller, change: CallOptions = {
 }
 
 async function countAll(): Promise<string> {
-  const tables = ["solver_case", "advice", "run", "run_revision", "machine", "audit", "idempotency_key", "edition"];
+  const tables = ["solver_case", "advice", "run", "run_revision", "machine", "audit", "idempotency_key", "edition", "run_log", "log_mapping", "webhook", "webhook_delivery"];
   const { rows } = await world.owner.query(tables.map((table) => `select '${table}' as name, count(*)::int as n from ${table}`).join(" union all "));
   return JSON.stringify(rows);
 }
@@ -128,6 +159,8 @@ describe("every role that may", () => {
       expect(answer.status, `${role}: ${answer.text.slice(0, 300)}`).toBe(operation.status);
       expect(answer.headers.get("cache-control")).toBe("no-store");
       expect(answer.headers.get("x-content-type-options")).toBe("nosniff");
+      if (operation.id === "deleteLogMapping") mappingId = await makers.mapping();
+      if (operation.id === "deleteWebhook") webhookId = await makers.webhook();
       if (operation.id === "deleteMachine") machineId = (await world.expect(201, operations.createMachine.response.schema, "POST", "/api/v1/machines", { body: sheet() })).id;
     }
   });

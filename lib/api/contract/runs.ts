@@ -4,6 +4,7 @@ import { runComparisonSchema } from "@/lib/runs/comparison";
 import { strategyIds } from "@/lib/shared/strategy-ids";
 import { defineOperation } from "../operation";
 import { caseParams, idParams, instantSchema, listOf, pageQuery, personSchema } from "./common";
+import { findingSchema } from "./findings";
 
 const parametersSchema = z.record(z.string(), z.union([z.number(), z.string()]));
 
@@ -47,7 +48,13 @@ export const revisionSchema = z.object({
 });
 export type RevisionView = z.infer<typeof revisionSchema>;
 
-export const runDetailSchema = runSchema.extend({ revisions: z.array(revisionSchema) });
+export const runDetailSchema = runSchema.extend({
+  revisions: z.array(revisionSchema),
+  /** The diagnosis: with the run's log where there is one, against the case's other runs. */
+  findings: z.array(findingSchema),
+  hasLog: z.boolean(),
+});
+export type RunDetailView = z.infer<typeof runDetailSchema>;
 
 export const runRecordedSchema = z.object({ id: z.string(), comparison: runComparisonSchema });
 export type RunRecorded = z.infer<typeof runRecordedSchema>;
@@ -97,7 +104,7 @@ export const runOperations = {
     method: "GET",
     path: "/api/v1/runs/{id}",
     tag: "Runs",
-    summary: "One run with what it said before each correction",
+    summary: "One run with its diagnosis and what it said before each correction",
     permission: "runs:read",
     params: idParams,
     response: { kind: "json", schema: runDetailSchema },
