@@ -76,6 +76,12 @@ export async function lockCase(db: TeamDatabase, scope: Scope, ref: CaseRef) {
   return rows[0] ?? null;
 }
 
+/** The same for adding a run: no advice is added until the transaction ends, but other runs may be. */
+export async function holdCase(db: TeamDatabase, scope: Scope, ref: CaseRef) {
+  const rows = await db.select(caseColumns).from(solverCase).where(whereCase(scope, ref)).for("share");
+  return rows[0] ?? null;
+}
+
 function whereCase(scope: Scope, ref: CaseRef): SQL | undefined {
   return and(eq(solverCase.teamId, scope.teamId), "id" in ref ? eq(solverCase.id, ref.id) : eq(solverCase.number, ref.number));
 }

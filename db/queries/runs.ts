@@ -36,6 +36,17 @@ export async function latestAdviceOf(db: TeamDatabase, scope: Scope, caseId: str
   return rows[0] ?? null;
 }
 
+/** The same without its contents, which are long: all that a run needs to know of it. */
+export async function latestAdviceIdOf(db: TeamDatabase, scope: Scope, caseId: string): Promise<string | null> {
+  const rows = await db
+    .select({ id: advice.id })
+    .from(advice)
+    .where(and(eq(advice.teamId, scope.teamId), eq(advice.caseId, caseId)))
+    .orderBy(desc(advice.sequence))
+    .limit(1);
+  return rows[0]?.id ?? null;
+}
+
 const author = alias(user, "author");
 const withdrawer = alias(user, "withdrawer");
 

@@ -1,6 +1,6 @@
-import { lockCase } from "@/db/queries/cases";
+import { holdCase } from "@/db/queries/cases";
 import { recordAudit } from "@/db/queries/record-audit";
-import { findRun, insertRuns, latestAdviceOf, type RunRow, type RunSource } from "@/db/queries/runs";
+import { findRun, insertRuns, latestAdviceIdOf, type RunRow, type RunSource } from "@/db/queries/runs";
 import type { TeamDatabase } from "@/db/scope";
 import type { Actor, Scope } from "@/lib/auth/guard";
 import type { RunReport } from "@/lib/runs/run";
@@ -16,11 +16,11 @@ type NewReport = { caseRef: string; report: RunReport; source: RunSource };
  * itself enters the record, whether from the form, a call or a log. Throws AppError "not-found" for the case.
  */
 export async function storeRun(db: TeamDatabase, scope: Scope, { caseRef, report, source }: NewReport): Promise<RunRow> {
-  const found = await lockCase(db, scope, caseRefOf(caseRef));
+  const found = await holdCase(db, scope, caseRefOf(caseRef));
   if (found === null) throw caseNotFound();
-  const advice = await latestAdviceOf(db, scope, found.id);
+  const adviceId = await latestAdviceIdOf(db, scope, found.id);
   const values = runValues(report, found.answers.hardware.cores, systemClock());
-  const [id] = await insertRuns(db, scope, [{ ...values, caseId: found.id, adviceId: advice?.id ?? null, source }]);
+  const [id] = await insertRuns(db, scope, [{ ...values, caseId: found.id, adviceId, source }]);
   const row = id === undefined ? null : await findRun(db, scope, id);
   if (row === null) throw new Error("The run was not stored.");
   const detail = { case: found.number, strategy: report.strategy, outcome: report.outcome };
