@@ -18,7 +18,7 @@ type EntryDetailProps = { entry: RankingEntry; spacing: number; /** The options 
 /** All there is to know about one strategy of an advice. */
 export function EntryDetail({ entry, spacing, options }: EntryDetailProps) {
   return (
-    <div className="grid gap-4">
+    <div className="grid grid-cols-1 gap-4">
       <Figures entry={entry} />
       {entry.cautions.length > 0 && (
         <Notice tone="warn" title="Mind">

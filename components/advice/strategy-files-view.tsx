@@ -6,7 +6,7 @@ import type { StrategyFiles } from "@/lib/api/contract/cases";
 export function StrategyFilesView({ files, prefix }: { files: StrategyFiles; prefix: string }) {
   const { options, recipe, batchScript } = files;
   return (
-    <div className="grid gap-5">
+    <div className="grid grid-cols-1 gap-5">
       <div className="grid items-start gap-5 xl:grid-cols-[minmax(0,3fr)_minmax(0,2fr)]">
         {options.kind === "petsc" ? (
           <CodeBlock title={options.filename} code={options.text} fileName={`${prefix}${options.filename}`} />

@@ -9,7 +9,7 @@ import { Badge } from "@/components/ui/badge";
 import { Quantity } from "@/components/ui/quantity";
 import { Table, TableBody, TableCell, TableHead, TableHeader, TableRow } from "@/components/ui/table";
 import type { CaseStatus, CaseSummary } from "@/lib/api/contract/cases";
-import { discretisationLabels, meshFamilyLabels } from "@/lib/questionnaire/answer-labels";
+import { discretisationNames, meshFamilyLabels } from "@/lib/questionnaire/answer-labels";
 import { formatDate } from "@/lib/shared/format-date";
 
 type CaseTableProps = { cases: readonly CaseSummary[]; sort: string; onSort: (sort: string) => void };
@@ -37,7 +37,7 @@ const columns = column.columns([
         <Link href={`/cases/${one.number}`} className="font-medium underline-offset-3 hover:underline">
           {one.title === "" ? `Case ${one.number}` : one.title}
         </Link>
-        <span className="text-xs text-faint">{discretisationLabels[one.discretisation]}, {meshFamilyLabels[one.meshFamily].toLowerCase()}</span>
+        <span className="text-xs text-faint">{discretisationNames[one.discretisation]}, {meshFamilyLabels[one.meshFamily].toLowerCase()}</span>
       </span>
     ),
   }),

@@ -8,7 +8,7 @@ export function Sheet({ children, margin, className }: SheetProps) {
   return (
     <div className="mx-auto w-full max-w-desk px-3 py-5 sm:px-6 sm:py-7">
       <div className={cn("grid items-start gap-x-7 gap-y-6", margin !== undefined && "lg:grid-cols-[minmax(0,1fr)_17rem] xl:grid-cols-[minmax(0,1fr)_19rem]")}>
-        <div className={cn("neatline grid min-w-0 content-start gap-6 px-4 py-6 sm:px-7 sm:py-8", className)}>{children}</div>
+        <div className={cn("neatline grid min-w-0 grid-cols-1 content-start gap-6 px-4 py-6 sm:px-7 sm:py-8", className)}>{children}</div>
         {margin}
       </div>
     </div>

@@ -23,7 +23,7 @@ export function RunComparisonTable({ comparison, colour }: { comparison: RunComp
     rows.flatMap(({ predicted, ratio }) => (predicted !== null && predicted.median > 0 ? [predicted.low / predicted.median, predicted.high / predicted.median, ...(ratio === null ? [] : [ratio])] : [])),
   );
   return (
-    <div className="grid gap-3">
+    <div className="grid grid-cols-1 gap-3">
       <p className="flex flex-wrap items-center gap-2 text-sm">
         <Badge tone={comparison.worked ? "forest" : "bad"}>{comparison.worked ? "worked" : "did not work"}</Badge>
         <span className="text-faint">{residualTexts[comparison.residual]}</span>

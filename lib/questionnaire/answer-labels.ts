@@ -3,9 +3,17 @@ import type { Boundary, Capability, ContrastPattern, Discretisation, MeshFamily,
 /** How the answers read on screen and in words. */
 export const discretisationLabels: Record<Discretisation, string> = {
   "vem-mixed": "Mixed virtual elements",
-  rt: "Raviart-Thomas, tetrahedra",
-  bdm: "Brezzi-Douglas-Marini, tetrahedra",
-  "rt-hex": "Face elements, hexahedra",
+  rt: "Raviart-Thomas on tetrahedra",
+  bdm: "Brezzi-Douglas-Marini on tetrahedra",
+  "rt-hex": "Face elements on hexahedra",
+};
+
+/** The same without the cells they live on, for where the mesh stands beside them. */
+export const discretisationNames: Record<Discretisation, string> = {
+  "vem-mixed": "Mixed virtual elements",
+  rt: "Raviart-Thomas",
+  bdm: "Brezzi-Douglas-Marini",
+  "rt-hex": "Hexahedral face elements",
 };
 
 export const meshFamilyLabels: Record<MeshFamily, string> = {

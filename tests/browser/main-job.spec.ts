@@ -65,7 +65,7 @@ test("a run is corrected with its former values kept, and withdrawn but not dele
   await opened.getByRole("button", { name: "Former values" }).click();
   await expect(page.getByRole("dialog").getByText("9.8")).toBeVisible();
   await expect(page.getByRole("dialog").getByText("Read from the wrong line.")).toBeVisible();
-  await page.getByRole("button", { name: "Close" }).click();
+  await page.getByRole("button", { name: "Close", exact: true }).click();
 
   await opened.getByRole("button", { name: "Withdraw" }).click();
   await page.getByRole("dialog").getByLabel("Why").fill("Wrong machine.");

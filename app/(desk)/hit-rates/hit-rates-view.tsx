@@ -45,7 +45,7 @@ export function HitRatesView() {
       ) : data.cases === 0 ? (
         <NothingYet filtered={Object.keys(filter).length > 0} onClear={() => change(Object.fromEntries(names.map((name) => [name, ""])))} />
       ) : (
-        <div className={isPlaceholderData ? "grid gap-10 opacity-60" : "grid gap-10"}>
+        <div className={isPlaceholderData ? "grid grid-cols-1 gap-10 opacity-60" : "grid grid-cols-1 gap-10"}>
           <Figures data={data} />
         </div>
       )}
@@ -89,7 +89,7 @@ function Figures({ data }: { data: HitRatesResponse }) {
 
 function Block({ title, children }: { title: string; children: ReactNode }) {
   return (
-    <section aria-label={title} className="grid gap-4">
+    <section aria-label={title} className="grid grid-cols-1 gap-4">
       <h2 className="border-b border-contour pb-1 text-lg font-semibold">{title}</h2>
       {children}
     </section>

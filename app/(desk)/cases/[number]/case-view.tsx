@@ -67,7 +67,7 @@ export function CaseView({ reference, initial, mayWrite }: CaseViewProps) {
           <ul className="grid gap-1">{detail.adviceChanges.map((change, index) => <li key={index}>{change}</li>)}</ul>
         </Notice>
       )}
-      <section aria-labelledby="ranking" className="grid gap-2">
+      <section aria-labelledby="ranking" className="grid grid-cols-1 gap-2">
         <h2 id="ranking" className="text-lg font-semibold">Ranked strategies</h2>
         <p className="text-sm text-faint">Time relative to the first: predicted time times the factors of rules, priority and evidence. Bars are 80 % ranges; pegs are measured runs.</p>
         {first === undefined && <Notice tone="bad" title="No strategy may compete">The reasons stand below, one for each. More memory, more nodes or another capability of your program would let some in.</Notice>}
@@ -80,7 +80,7 @@ export function CaseView({ reference, initial, mayWrite }: CaseViewProps) {
         />
       </section>
       {others.length > 0 && (
-        <section aria-labelledby="below" className="grid gap-2">
+        <section aria-labelledby="below" className="grid grid-cols-1 gap-2">
           <h2 id="below" className="text-lg font-semibold">Below the line</h2>
           <BelowTheLine entries={others} />
         </section>

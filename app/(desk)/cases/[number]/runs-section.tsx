@@ -20,7 +20,7 @@ export function RunsSection({ reference, detail, mayWrite, reporting, onReportin
   const [history, setHistory] = useState<RunView | null>(null);
   const [recorded, setRecorded] = useState<string | null>(null);
   return (
-    <section aria-labelledby="runs" className="grid gap-3">
+    <section aria-labelledby="runs" className="grid grid-cols-1 gap-3">
       <div className="flex flex-wrap items-baseline justify-between gap-3">
         <h2 id="runs" className="text-lg font-semibold">Runs</h2>
         {mayWrite && <Button size="small" onClick={() => onReporting(true)} data-screen-only>Report a run</Button>}

@@ -17,7 +17,7 @@ export function ScalingSection({ reference, adviceId }: { reference: string; adv
   const [over, setOver] = useState<CurveAxis>("cores");
   const curves = useQuery(scalingCurvesQuery(reference, adviceId, over));
   return (
-    <section aria-labelledby="scaling" className="grid gap-3">
+    <section aria-labelledby="scaling" className="grid grid-cols-1 gap-3">
       <div className="flex flex-wrap items-end justify-between gap-3">
         <h2 id="scaling" className="text-lg font-semibold">Scaling</h2>
         <SegmentedControl legend="Predicted time against" legendHidden value={over} onValueChange={setOver} options={[{ value: "cores", label: "Cores" }, { value: "unknowns", label: "Unknowns" }]} />
