@@ -9,13 +9,12 @@ export const intervalConfidence = 0.9;
  * Thresholds that the recorded cases can't tell from the chosen one, by inverting a test: a threshold t stays in the interval unless the
  * cases between it and the chosen one cost significantly more under t. With m such cases and a gain's spread s from case to case, t goes
  * when the sum of their gains exceeds z s sqrt(m). s is Rice's estimate from neighbouring cases, sum (g[i+1] - g[i])^2 / (2 (n - 1)), which
- * a trend or a jump hardly touches (Rice, Ann. Statist. 12, 1984). z is one-sided at (1 - confidence) / 10: half for each side, and a fifth
- * of that because t is compared with a choice made to look best, over stretches of every length. The ends are the recorded values next
+ * a trend or a jump hardly touches (Rice, Ann. Statist. 12, 1984). z leaves half of 1 - confidence to each side. The ends are the recorded values next
  * to the last threshold kept. `chosen` are the values next to the chosen threshold, `ends` the record's smallest and largest value.
  */
 export function thresholdInterval(placed: readonly Placed[], chosen: { below: number; above: number }, ends: readonly [number, number]): ThresholdInterval {
   const known = placed.flatMap(({ value, gainAbove }) => (gainAbove === null ? [] : [{ value, gain: gainAbove }]));
-  const limit = normalQuantile(1 - (1 - intervalConfidence) / 10) * spreadOf(known.map(({ gain }) => gain));
+  const limit = normalQuantile(0.5 + intervalConfidence / 2) * spreadOf(known.map(({ gain }) => gain));
   // Raising the threshold past a case puts the case below it and loses its gain above; lowering wins it.
   const higher = reach(known.filter(({ value }) => value >= chosen.above).map(({ value, gain }) => ({ value, cost: gain })), limit);
   const lower = reach(known.filter(({ value }) => value <= chosen.below).reverse().map(({ value, gain }) => ({ value, cost: -gain })), limit);
