@@ -2,8 +2,9 @@ import { and, desc, eq, lt, sql } from "drizzle-orm";
 import { alias } from "drizzle-orm/pg-core";
 import { z } from "zod";
 import type { Scope } from "@/lib/auth/guard";
+import type { RuleSet } from "@/rules/rule-schema";
 import { user } from "../schema/auth";
-import { advice } from "../schema/cases";
+import { advice, teamCounter } from "../schema/cases";
 import { edition } from "../schema/rulebook";
 import type { TeamDatabase } from "../scope";
 
@@ -19,6 +20,7 @@ const summary = {
   submitterName: submitter.name,
   approvedBy: edition.approvedBy,
   approverName: approver.name,
+  alone: edition.alone,
   publishedAt: edition.publishedAt,
   advice: sql<number>`(select count(*)::int from ${advice} a where a.team_id = ${edition.teamId} and a.edition_number = ${edition.number})`,
 };
@@ -46,13 +48,41 @@ export async function findEdition(db: TeamDatabase, scope: Scope, number: number
   return rows[0] ?? null;
 }
 
-export async function liveEditionNumber(db: TeamDatabase, scope: Scope): Promise<number | null> {
+export async function liveEditionNumber(db: TeamDatabase, scope: Pick<Scope, "teamId">): Promise<number | null> {
   const rows = await db.select({ number: edition.number }).from(edition).where(eq(edition.teamId, scope.teamId)).orderBy(desc(edition.number)).limit(1);
   return rows[0]?.number ?? null;
 }
 
+/** Waits for whoever else does one of the things that a team does one at a time, until the transaction ends. */
+export async function lockCounter(db: TeamDatabase, scope: Scope): Promise<void> {
+  await db.select({ teamId: teamCounter.teamId }).from(teamCounter).where(eq(teamCounter.teamId, scope.teamId)).for("update");
+}
+
+/** Takes the team's next edition number; its counter stays locked until the transaction ends, so that two publications wait for each other. */
+export async function takeEditionNumber(db: TeamDatabase, scope: Scope): Promise<number> {
+  const [row] = await db
+    .update(teamCounter)
+    .set({ nextEdition: sql`${teamCounter.nextEdition} + 1` })
+    .where(eq(teamCounter.teamId, scope.teamId))
+    .returning({ nextEdition: teamCounter.nextEdition });
+  if (!row) throw new Error("The team's counter gave no edition number.");
+  return row.nextEdition - 1;
+}
+
+export type NewEdition = { number: number; rules: RuleSet; note: string; submittedBy: string | null; alone: boolean; origin: string };
+
+/** Editions are only ever added: the role may neither change nor delete one. */
+export async function insertEdition(db: TeamDatabase, scope: Scope, params: NewEdition): Promise<{ id: string }> {
+  const [row] = await db
+    .insert(edition)
+    .values({ ...params, teamId: scope.teamId, approvedBy: scope.userId })
+    .returning({ id: edition.id });
+  if (!row) throw new Error("The edition was not stored.");
+  return row;
+}
+
 /** The rules of one edition alone. */
-export async function findRules(db: TeamDatabase, scope: Scope, number: number) {
+export async function findRules(db: TeamDatabase, scope: Pick<Scope, "teamId">, number: number) {
   const rows = await db.select({ rules: edition.rules }).from(edition).where(and(eq(edition.teamId, scope.teamId), eq(edition.number, number)));
   return rows[0]?.rules ?? null;
 }

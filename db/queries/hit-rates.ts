@@ -41,13 +41,13 @@ type Row = z.infer<typeof rowSchema>;
  * latest whose first strategy has such a run after it; while there is none, the latest of all, with nothing judged.
  * `caseIds` restricts to those cases. Ordered by case number.
  */
-export async function listHitRateRecords(db: TeamDatabase, scope: Scope, params: { caseIds?: readonly string[] } = {}): Promise<HitRateRecord[]> {
+export async function listHitRateRecords(db: TeamDatabase, scope: Pick<Scope, "teamId">, params: { caseIds?: readonly string[] } = {}): Promise<HitRateRecord[]> {
   if (params.caseIds?.length === 0) return [];
   const { rows } = await db.execute(recordQuery(scope, params.caseIds));
   return gather(z.array(rowSchema).parse(rows));
 }
 
-function recordQuery(scope: Scope, caseIds: readonly string[] | undefined): SQL {
+function recordQuery(scope: Pick<Scope, "teamId">, caseIds: readonly string[] | undefined): SQL {
   const chosen = caseIds === undefined ? sql`` : sql`and c.id = any(${sql.param([...caseIds])}::uuid[])`;
   return sql`
     with chosen as (

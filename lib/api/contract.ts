@@ -1,9 +1,11 @@
 import { adviceOperations } from "./contract/advice";
 import { benchPackOperations } from "./contract/bench-packs";
 import { caseOperations } from "./contract/cases";
+import { draftOperations } from "./contract/drafts";
 import { logOperations } from "./contract/logs";
 import { machineOperations } from "./contract/machines";
 import { recordOperations } from "./contract/record";
+import { refinementOperations } from "./contract/refinement";
 import { runOperations } from "./contract/runs";
 import { webhookOperations } from "./contract/webhooks";
 import type { Operation } from "./operation";
@@ -18,5 +20,7 @@ export const operations = {
   ...machineOperations,
   ...webhookOperations,
   ...recordOperations,
+  ...draftOperations,
+  ...refinementOperations,
 } satisfies Record<string, Operation>;
 export type OperationId = keyof typeof operations;

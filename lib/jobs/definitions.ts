@@ -13,6 +13,9 @@ export const jobDefinitions = {
   "prepare-team": { payload: z.strictObject({ teamId: z.string().min(1), ownerId: z.string().min(1) }), retryLimit: 8, retryDelaySeconds: 5, expireSeconds: 120 },
   // Nine tries with doubled pauses reach over about an hour and a half: a receiver may restart in between.
   "deliver-webhook": { payload: z.strictObject({ teamId: z.string().min(1), deliveryId: z.uuid() }), retryLimit: 8, retryDelaySeconds: 20, expireSeconds: 60 },
+  // Long work; a worker that starts takes up at once what a killed one had begun (requeue-interrupted).
+  "run-replay": { payload: z.strictObject({ teamId: z.string().min(1), replayId: z.uuid() }), retryLimit: 4, retryDelaySeconds: 5, expireSeconds: 900 },
+  "search-proposals": { payload: z.strictObject({ teamId: z.string().min(1), searchId: z.uuid() }), retryLimit: 4, retryDelaySeconds: 5, expireSeconds: 900 },
 } as const;
 
 export type JobName = keyof typeof jobDefinitions;

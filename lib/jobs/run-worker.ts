@@ -3,6 +3,7 @@ import PgBoss from "pg-boss";
 import { authDatabase } from "@/db/client";
 import { jobSchemaName } from "./definitions";
 import { handleJob, jobNames } from "./handlers";
+import { requeueInterrupted } from "./requeue-interrupted";
 
 type Log = (line: string) => void;
 
@@ -25,6 +26,7 @@ export async function runWorker(options: { connectionString: string; log: Log; s
   });
   boss.on("error", (error) => options.log(`queue: ${error.message}`));
   await boss.start();
+  await requeueInterrupted();
   for (const name of jobNames) {
     await boss.work(name, { batchSize: 1, pollingIntervalSeconds: 1 }, async (jobs) => {
       for (const job of jobs) await runJob(name, job, options.log);

@@ -4,6 +4,7 @@ import { operations, type OperationId } from "@/lib/api/contract";
 import type { Operation } from "@/lib/api/operation";
 import { problemMediaType } from "@/lib/api/problem";
 import { mayRole, isReadPermission, roles } from "@/lib/auth/permissions";
+import { firstEdition } from "@/rules/sets/first-edition";
 import { allOperations, createdCase, fillPath, recordedRun, startApiWorld, type ApiWorld, type CallOptions, type Caller } from "../support/api";
 
 let world: ApiWorld;
@@ -14,6 +15,10 @@ let machineId: string;
 let loggedRunId: string;
 let mappingId: string;
 let webhookId: string;
+let replayId: string;
+let searchId: string;
+/** A draft for each role and call that moves one on. */
+const movedDrafts: Record<string, string> = {};
 let serial = 0;
 
 const run = { strategy: "schur-diag-direct", outcome: "converged", setupSeconds: 1, solveSeconds: 2 };
@@ -41,11 +46,30 @@ beforeAll(async () => {
   loggedRunId = logged.runId ?? "none";
   mappingId = await makers.mapping();
   webhookId = await makers.webhook();
+  await makeDrafts();
 });
 afterAll(() => world.close());
 
+const moves = ["read", "save", "discard", "submit", "withdraw", "publish", "replay"] as const;
+const draftOf = (as: Caller, move: (typeof moves)[number]) => movedDrafts[`${as === "curator" ? "curator" : "owner"}/${move}`] ?? "none";
+
+/** Somebody else submits what a role shall publish. */
+async function makeDrafts(): Promise<void> {
+  const draft = operations.getDraft.response.schema;
+  for (const role of ["owner", "curator"] as const) {
+    const other = role === "owner" ? "curator" : "owner";
+    for (const move of moves) {
+      const { id } = await world.expect(201, draft, "POST", "/api/v1/rulebook/drafts", { body: { from: "live" } });
+      movedDrafts[`${role}/${move}`] = id;
+      if (move === "withdraw" || move === "publish") await world.expect(200, draft, "POST", `/api/v1/rulebook/drafts/${id}/submit`, { as: other, body: { version: 1, note: "As it is." } });
+    }
+  }
+  replayId = (await world.expect(201, operations.startReplay.response.schema, "POST", `/api/v1/rulebook/drafts/${draftOf("owner", "read")}/replay`)).id;
+  searchId = (await world.expect(200, operations.startSearch.response.schema, "POST", "/api/v1/rulebook/proposals")).id;
+}
+
 /** A good request of every operation; a new operation without one does not compile. */
-const goodRequests: Record<OperationId, () => { params?: Record<string, string>; options?: CallOptions; query?: string }> = {
+const goodRequests: Record<OperationId, (as: Caller) => { params?: Record<string, string>; options?: CallOptions; query?: string }> = {
   advise: () => ({ options: { body: defaultQuestionnaire } }),
   createCase: () => ({ options: { body: { questionnaire: defaultQuestionnaire } } }),
   listCases: () => ({ query: "?sort=title&limit=5" }),
@@ -85,17 +109,40 @@ const goodRequests: Record<OperationId, () => { params?: Record<string, string>;
   getEdition: () => ({ params: { number: "1" } }),
   listAudit: () => ({}),
   exportTeam: () => ({ query: "?format=ndjson" }),
+  listDrafts: () => ({ query: "?status=open" }),
+  createDraft: () => ({ options: { body: { from: "edition", number: 1 } } }),
+  getDraft: () => ({ params: { id: draftOf("owner", "read") } }),
+  saveDraft: (as) => ({ params: { id: draftOf(as, "save") }, options: { body: { version: 1, title: "Renamed" } } }),
+  discardDraft: (as) => ({ params: { id: draftOf(as, "discard") } }),
+  submitDraft: (as) => ({ params: { id: draftOf(as, "submit") }, options: { body: { version: 1, note: "To be read." } } }),
+  withdrawDraft: (as) => ({ params: { id: draftOf(as, "withdraw") } }),
+  // The owner publishes first.
+  publishDraft: (as) => ({ params: { id: draftOf(as, "publish") }, options: { body: { version: 1, replacing: as === "curator" ? 2 : 1 } } }),
+  tryRules: () => ({ options: { body: { case: caseId, rules: firstEdition } } }),
+  compareEditions: () => ({ params: { number: "1" } }),
+  exportEdition: () => ({ params: { number: "1" } }),
+  startReplay: (as) => ({ params: { id: draftOf(as, "replay") } }),
+  listReplays: () => ({ params: { id: draftOf("owner", "read") } }),
+  getReplay: () => ({ params: { id: draftOf("owner", "read"), replayId } }),
+  cancelReplay: () => ({ params: { id: draftOf("owner", "read"), replayId } }),
+  listRuleRecords: () => ({}),
+  startSearch: () => ({}),
+  listSearches: () => ({}),
+  getSearch: () => ({ params: { id: searchId } }),
+  cancelSearch: () => ({ params: { id: searchId } }),
 };
+
+const ofOwnEdition: ReadonlySet<string> = new Set<OperationId>(["getEdition", "compareEditions", "exportEdition"]);
 
 async function attempt(operation: Operation, as: Caller, change: CallOptions = {}) {
   const id = Object.keys(operations).find((name): name is OperationId => name === operation.id);
   if (id === undefined) throw new Error(`${operation.id} is not registered under its id.`);
-  const { params = {}, options = {}, query = "" } = goodRequests[id]();
+  const { params = {}, options = {}, query = "" } = goodRequests[id](as);
   return world.call(operation.method, fillPath(operation, params) + query, { ...options, ...change, as });
 }
 
 async function countAll(): Promise<string> {
-  const tables = ["solver_case", "advice", "run", "run_revision", "machine", "audit", "idempotency_key", "edition", "run_log", "log_mapping", "webhook", "webhook_delivery"];
+  const tables = ["solver_case", "advice", "run", "run_revision", "machine", "audit", "idempotency_key", "edition", "run_log", "log_mapping", "webhook", "webhook_delivery", "draft", "replay", "proposal_search"];
   const { rows } = await world.owner.query(tables.map((table) => `select '${table}' as name, count(*)::int as n from ${table}`).join(" union all "));
   return JSON.stringify(rows);
 }
@@ -132,7 +179,7 @@ describe.each(allOperations.map((operation) => [operation.id, operation] as cons
       return;
     }
     // Everybody has an edition 1: their own.
-    if (operation.id === "getEdition") return expect(answer.status).toBe(200);
+    if (ofOwnEdition.has(operation.id)) return expect(answer.status).toBe(200);
     expect(answer.status).toBe(404);
     expect(answer.text).not.toContain("Olive");
     expect(await countAll()).toBe(before);
@@ -147,7 +194,7 @@ describe.each(allOperations.map((operation) => [operation.id, operation] as cons
 });
 
 function goodRequestParams(operation: Operation): Record<string, string> {
-  return operation.id === "getEdition" ? { number: "1" } : { id: caseId, strategy: "direct-ldlt" };
+  return ofOwnEdition.has(operation.id) ? { number: "1" } : { id: caseId, strategy: "direct-ldlt", replayId };
 }
 
 describe("every role that may", () => {

@@ -13,7 +13,7 @@ export const hitRatesResponseSchema = hitRatesSchema.extend({
 });
 export type HitRatesResponse = z.infer<typeof hitRatesResponseSchema>;
 
-const editionSummarySchema = z.object({
+export const editionSummarySchema = z.object({
   number: z.int(),
   live: z.boolean(),
   rules: z.int(),
@@ -22,6 +22,8 @@ const editionSummarySchema = z.object({
   origin: z.string(),
   submittedBy: personSchema,
   approvedBy: personSchema,
+  /** Published by the one who submitted it, the team's only curator. */
+  alone: z.boolean(),
   publishedAt: instantSchema,
   /** Pieces of advice given under it. */
   advice: z.int(),

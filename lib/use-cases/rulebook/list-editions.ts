@@ -30,6 +30,7 @@ export function editionSummary(row: EditionRow, liveNumber: number | null): Edit
     origin: row.origin,
     submittedBy: personView(row.submittedBy, row.submitterName),
     approvedBy: personView(row.approvedBy, row.approverName),
+    alone: row.alone,
     publishedAt: row.publishedAt.toISOString(),
     advice: row.advice,
   };
