@@ -32,6 +32,13 @@ export async function closeDatabases(): Promise<void> {
   await Promise.all(open.map((database) => database.$client.end()));
 }
 
+/** Gives up on a server that does not answer after ten seconds, however long one may wait for a free connection. */
+class PromptClient extends pg.Client {
+  constructor(config?: string | pg.ClientConfig) {
+    super(typeof config === "object" ? { ...config, connectionTimeoutMillis: 10_000 } : config);
+  }
+}
+
 function openDatabase(account: Account): Database {
   const variable = urlVariables[account];
   const connectionString = process.env[variable];
@@ -40,7 +47,9 @@ function openDatabase(account: Account): Database {
     connectionString,
     max: 10,
     idleTimeoutMillis: 30_000,
-    connectionTimeoutMillis: 10_000,
+    // The pool's own limit counts waiting for a free connection too: a burst of thousands of reports waits its turn.
+    connectionTimeoutMillis: 120_000,
+    Client: PromptClient,
     application_name: `saddlemark-${account}`,
   });
   // An idle connection breaks when the server restarts; the pool replaces it. Without a listener the process would end.

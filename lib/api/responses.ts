@@ -34,10 +34,13 @@ export function failureResponse(error: unknown, place: string): Response {
 /** Connection refused or reset, and the classes of PostgreSQL's codes for a server that is starting, stopping or out of connections. */
 const outOfServiceCode = /^(ECONNREFUSED|ECONNRESET|EPIPE|ETIMEDOUT|57P0\d|53\d{3}|08\d{3})$/;
 
+/** What the driver and its pool say, without a code, when nobody answers or no connection gets free. */
+const connectionTimedOut = /timeout exceeded when trying to connect|due to connection timeout|^timeout expired$/;
+
 function isOutOfService(error: unknown): boolean {
   for (let step = error, depth = 0; step instanceof Error && depth < 5; step = step.cause, depth++) {
     if ("code" in step && typeof step.code === "string" && outOfServiceCode.test(step.code)) return true;
-    if (step.message.includes("timeout exceeded when trying to connect")) return true;
+    if (connectionTimedOut.test(step.message)) return true;
   }
   return false;
 }
