@@ -71,7 +71,7 @@ export function advisedWorkspacePercent({ answers }: StrategyContext): number {
 export function advisedSymmetricAnalysis({ answers, sizes }: StrategyContext): "matrix" | "compressed" {
   if (answers.degree >= 2) return "matrix";
   const smallTetrahedral = answers.meshFamily === "tetrahedra" && sizes.unknowns < smallSystem;
-  return smallTetrahedral && answers.contrast.ratio < 100 ? "matrix" : "compressed";
+  return smallTetrahedral && answers.contrast.ratio <= 1e4 ? "matrix" : "compressed";
 }
 
 /** Nested dissection pays from about these many unknowns on; below, its analysis takes longer than it saves. */
