@@ -50,14 +50,14 @@ function wholeRule(rule: Rule, nameOf: NameOf, side: (text: string) => Pick<Chan
   return [
     ...(rule.enabled ? [] : [part("enabled", "off", "Switched off.")]),
     part("condition", when, `When ${when}.`),
-    ...effects.map((effect) => part("effects", effect, `Then ${effect}.`)),
-    part("rationale", rule.rationale, `Because: ${rule.rationale}`),
-    part("source", describeSource(rule.source), `Source: ${describeSource(rule.source)}.`),
+    ...effects.map((effect) => part("effects", effect, `Then ${bare(effect)}.`)),
+    part("rationale", rule.rationale, `Because: ${bare(rule.rationale)}.`),
+    part("source", describeSource(rule.source), `Source: ${bare(describeSource(rule.source))}.`),
   ];
 }
 
 function changesOf(old: Rule, now: Rule, nameOf: NameOf): Change[] {
-  const words = (aspect: RuleAspect, label: string, was: string, is: string): Change[] => [{ aspect, before: was, after: is, text: `${label}: ${is}, instead of: ${was}.` }];
+  const words = (aspect: RuleAspect, label: string, was: string, is: string): Change[] => [{ aspect, before: was, after: is, text: `${label}: ${bare(is)}, instead of: ${bare(was)}.` }];
   const onOff = (enabled: boolean) => (enabled ? "on" : "off");
   return [
     ...(old.title === now.title ? [] : words("title", "Title", old.title, now.title)),
@@ -78,14 +78,14 @@ function effectChanges(old: readonly Effect[], now: readonly Effect[], nameOf: N
   const changes = fresh.map((effect): Change => {
     const after = describeEffect(effect, nameOf);
     const former = gone.find((other) => !paired.has(other) && subjectOf(other) === subjectOf(effect));
-    if (former === undefined) return { aspect: "effects", before: null, after, text: `New effect: ${after}.` };
+    if (former === undefined) return { aspect: "effects", before: null, after, text: `New effect: ${bare(after)}.` };
     paired.add(former);
     const before = describeEffect(former, nameOf);
-    return { aspect: "effects", before, after, text: `Then ${after}, instead of: ${before}.` };
+    return { aspect: "effects", before, after, text: `Then ${bare(after)}, instead of: ${bare(before)}.` };
   });
   const removed = gone.filter((effect) => !paired.has(effect)).map((effect): Change => {
     const before = describeEffect(effect, nameOf);
-    return { aspect: "effects", before, after: null, text: `No longer: ${before}.` };
+    return { aspect: "effects", before, after: null, text: `No longer: ${bare(before)}.` };
   });
   if (changes.length + removed.length > 0) return [...changes, ...removed];
   const listed = (effects: readonly Effect[]) => effects.map((effect) => describeEffect(effect, nameOf)).join("; ");
@@ -106,6 +106,11 @@ function unmatched(first: readonly Effect[], second: readonly Effect[]): Effect[
 function subjectOf(effect: Effect): string {
   const subject: Record<Effect["kind"], string> = { favour: "preference", disfavour: "preference", exclude: "exclude", set: "set", caution: "caution", fallback: "fallback" };
   return [subject[effect.kind], effect.strategy ?? "", effect.kind === "set" ? effect.parameter : ""].join(" ");
+}
+
+/** Texts that people wrote may end in a full stop; the sentence around them brings its own. */
+function bare(text: string): string {
+  return text.replace(/\.$/, "");
 }
 
 function orderChange(from: number, to: number): Change {

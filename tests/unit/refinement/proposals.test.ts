@@ -5,8 +5,10 @@ import { proposalResultSchema, type Proposal, type ProposalResult } from "@/lib/
 import { leastContestedCases, searchProposals, searchProposalsAtOnce } from "@/lib/refinement/proposals";
 import { compareReplays } from "@/lib/refinement/replay";
 import type { ReplayCase } from "@/lib/refinement/replay-case";
+import { parameterCatalogue } from "@/lib/advice/parameter-catalogue";
 import { normalFrom, seededRandom } from "@/lib/shared/random";
 import type { RuleSet } from "@/rules/rule-schema";
+import { validateRuleSet } from "@/rules/validate-rule-set";
 import { syntheticCase } from "../../support/replay-fixtures";
 import { ruleOf } from "../../support/arbitrary-rules";
 
@@ -77,13 +79,87 @@ describe("the search for refinements", () => {
   });
 
   it.each([
-    ["a jump", jump],
-    ["a slow crossing", crossing],
-  ] as const)("holds the true threshold in its 90 %% interval in at least 80 %% of trials under 1.15x timing noise: %s", (_name, outcome) => {
+    { name: "a jump", outcome: jump },
+    { name: "a slow crossing", outcome: crossing },
+  ])("holds the true threshold in its 90 percent interval in at least 80 percent of trials under 1.15x timing noise: $name", ({ outcome }) => {
     const trials = Array.from({ length: 60 }, (_, trial) => thresholdOf(search(recordOf(5000 + trial, 160, noisy(outcome)), rulesWith(60_000), trial)));
     const found = trials.filter((change) => change !== null);
     const inside = found.filter(({ interval }) => interval.low <= planted && planted <= interval.high);
     expect(found.length).toBeGreaterThanOrEqual(54);
     expect(inside.length).toBeGreaterThanOrEqual(0.8 * 60);
+  });
+
+  it("says how many contested cases are missing and proposes nothing with too few", () => {
+    const result = search(recordOf(3, leastContestedCases - 1, jump), rulesWith(60_000));
+    expect(result).toMatchObject({ enough: false, contestedCases: leastContestedCases - 1, candidates: 0, proposals: [] });
+    expect(result.text).toMatch(/^Too few runs: 29 cases .* 30 are needed/);
+  });
+
+  it("does not learn from cases where only the first choice was run", () => {
+    const alone = recordOf(4, 160, jump).map(({ record, ...item }) => ({ ...item, record: { ...record, otherRuns: record.otherRuns.filter(({ strategy }) => strategy === "direct-ldlt") } }));
+    expect(search(alone, rulesWith(60_000))).toMatchObject({ enough: false, contestedCases: 0 });
+  });
+
+  it("makes proposals that hold what they promise when they are carried out and replayed", () => {
+    const cases = recordOf(21, 160, jump);
+    const rules = rulesWith(60_000);
+    const result = search(cases, rules);
+    expect(proposalResultSchema.parse(JSON.parse(JSON.stringify(result)))).toEqual(result);
+    expect(result.proposals[0]?.kind).toBe("threshold");
+    for (const proposal of result.proposals) {
+      const { before, after, changes, changed } = compareReplays(prepareReplay(cases), rules, applyProposal(rules, proposal));
+      expect(Number(after.regret.value)).toBeLessThan(Number(before.regret.value));
+      const { casesFor, casesAgainst, casesUnknown, heldOut, pValue } = proposal.evidence;
+      expect([changed.helped, changed.hurt, changed.unknown]).toEqual([casesFor, casesAgainst, casesUnknown]);
+      expect(changes.map(({ number }) => number)).toEqual(proposal.evidence.cases.map(({ number }) => number));
+      expect(heldOut.after.regret).toBeLessThan(heldOut.before.regret);
+      expect(pValue).toBeLessThanOrEqual(0.01);
+      expect(validateRuleSet(applyProposal(rules, proposal), parameterCatalogue).filter(({ severity }) => severity === "error")).toEqual([]);
+    }
+  });
+
+  it.each<[Proposal["kind"], RuleSet, Outcome]>([
+    // The rule alone makes the slower one first, everywhere.
+    ["switch-off", [ruleOf("wrong", { fact: "degree", operator: "greaterThanInclusive", value: 1 }, [{ kind: "disfavour", strategy: "direct-ldlt", factor: 3 }])], () => ({ direct: 10, block: 20 })],
+    ["factor", [ruleOf("weak", { fact: "meshFamily", operator: "equal", value: "voronoi" }, [{ kind: "disfavour", strategy: "direct-ldlt", factor: 1.2 }])], () => ({ direct: 20, block: 10 })],
+    ["new-rule", [], ({ degree }) => ({ direct: degree >= 3 ? 20 : 10, block: degree >= 3 ? 10 : 20 })],
+  ])("finds a case for a %s", (kind, rules, outcome) => {
+    const proposal = search(recordOf(31, 160, noisy(outcome)), rules).proposals.find((found) => found.kind === kind);
+    expect(proposal?.evidence.casesFor).toBeGreaterThan(20);
+    if (proposal?.change.kind === "new-rule") expect(proposal.change).toMatchObject({ fact: "degree", value: 3 });
+  });
+
+  it("proposes nothing where the rules are right", () => {
+    expect(search(recordOf(41, 160, noisy(jump)), rulesWith(planted)).proposals).toEqual([]);
+  });
+
+  it("gives the same result in steps as at once, and stops when told to", async () => {
+    const prepared = prepareReplay(recordOf(51, 80, jump));
+    const rules = rulesWith(60_000);
+    expect(await searchProposals(prepared, rules, { seed: 5 })).toEqual(searchProposalsAtOnce(prepareReplay(recordOf(51, 80, jump)), rules, 5));
+    await expect(searchProposals(prepared, rules, { seed: 5, signal: AbortSignal.abort(new Error("stopped")) })).rejects.toThrow("stopped");
+  });
+});
+
+describe("carrying out a proposal", () => {
+  const rules = rulesWith(60_000);
+  const [former] = rules;
+  const changed = { ...rulesWith(planted)[0], id: "large-goes-iterative" };
+
+  it("replaces the rule in its place, whatever the order of its keys, and leaves the given set alone", () => {
+    if (former === undefined) throw new Error("no rule");
+    const reordered = JSON.parse(JSON.stringify({ source: former.source, ...former }));
+    const applied = applyProposal(rules, { ruleId: former.id, formerRule: reordered, rule: { ...former, enabled: false } });
+    expect(applied.map(({ enabled }) => enabled)).toEqual([false, true]);
+    expect(rules[0]?.enabled).toBe(true);
+  });
+
+  it.each<[string, string, boolean, RegExp]>([
+    ["the rule is gone", "absent-rule", true, /no longer there/],
+    ["the rule has changed since", "many-cores", true, /has changed since/],
+    ["a new rule's id is taken", "many-cores", false, /already/],
+  ])("is refused when %s", (_name, ruleId, withFormer, message) => {
+    if (former === undefined) throw new Error("no rule");
+    expect(() => applyProposal(rules, { ruleId, formerRule: withFormer ? former : null, rule: { ...former, ...changed } })).toThrow(message);
   });
 });
