@@ -18,7 +18,7 @@ export type PackCandidate = {
 export type BenchPack = {
   caseNumber: number;
   title: string;
-  hardware: Hardware;
+  hardware: Pick<Hardware, "cores" | "nodes" | "memoryPerNodeGiB" | "timeLimitSeconds">;
   /** Address of this installation. */
   baseUrl: string;
   /** In the order in which they run. */

@@ -13,14 +13,16 @@ export class ApiProblem extends Error {
   }
 }
 
-type Call = { method?: "GET" | "POST" | "PATCH" | "DELETE"; body?: unknown; idempotencyKey?: string; signal?: AbortSignal };
+type Call = { method?: "GET" | "POST" | "PATCH" | "DELETE"; body?: unknown; /** Sent as it is instead of `body`. */ file?: Blob; idempotencyKey?: string; signal?: AbortSignal };
 
-async function send(path: string, { method = "GET", body, idempotencyKey, signal }: Call): Promise<Response> {
+async function send(path: string, { method = "GET", body, file, idempotencyKey, signal }: Call): Promise<Response> {
   const headers = new Headers({ accept: "application/json, text/plain" });
   if (body !== undefined) headers.set("content-type", "application/json");
+  if (file !== undefined) headers.set("content-type", "application/octet-stream");
   if (idempotencyKey !== undefined) headers.set("idempotency-key", idempotencyKey);
   const init: RequestInit = { method, headers, credentials: "same-origin" };
   if (body !== undefined) init.body = JSON.stringify(body);
+  if (file !== undefined) init.body = file;
   if (signal !== undefined) init.signal = signal;
   const response = await fetch(`/api/v1${path}`, init).catch((cause: unknown) => {
     if (signal?.aborted) throw cause;

@@ -11,6 +11,7 @@ import { Margin, MarginSection, Sheet } from "@/components/layout/sheet";
 import { requireActor } from "@/lib/auth/actor";
 import { readTeam } from "@/lib/use-cases/team/read-team";
 import { changeRoleAction, createKeyAction, inviteAction, leaveTeamAction, removeMemberAction, revokeInvitationAction, revokeKeyAction } from "./actions";
+import { WebhookDesk } from "./webhook-desk";
 
 export const metadata: Metadata = { title: "Team" };
 
@@ -35,6 +36,7 @@ export default async function TeamPage() {
         <KeyTable keys={team.keys} mayManage={team.mayManage} revoke={revokeKeyAction} />
         {team.mayManage && <KeyForm action={createKeyAction} />}
       </section>
+      {team.mayManage && <WebhookDesk />}
     </Sheet>
   );
 }
