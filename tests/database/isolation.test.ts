@@ -63,7 +63,7 @@ const secretTables = ["session", "account", "verification", "apikey", "throttle"
 
 beforeAll(async () => {
   database = await createTestDatabase();
-  [owner, app, auth] = await Promise.all([database.ownerUrl, database.appUrl, database.authUrl].map(connect));
+  [owner, app, auth] = await Promise.all([connect(database.ownerUrl), connect(database.appUrl), connect(database.authUrl)]);
   for (const statement of [...rowsOf("ours", "1"), ...rowsOf("theirs", "2")]) await owner.query(statement);
 });
 
