@@ -10,7 +10,7 @@ import { regionFamilies } from "./proposals/region-families";
 import { factorFamilies, switchOffFamilies } from "./proposals/revision-families";
 import { searchRecord, type SearchRecord } from "./proposals/search-record";
 import { thresholdFamilies } from "./proposals/threshold-families";
-import { runAtOnce, runInSteps, type StepOptions, type Steps } from "./run-in-steps";
+import { runAtOnce, runInSteps, scaled, type StepOptions, type Steps } from "./run-in-steps";
 
 /** Fewer contested cases than this, and nothing is searched. */
 export const leastContestedCases = 30;
@@ -45,34 +45,31 @@ function* searchSteps(prepared: PreparedReplay, ruleSet: RuleSet, seed: number):
   const record = searchRecord(prepared, ruleSet, seed);
   yield 0.02;
   if (record.rows.length < leastContestedCases) return resultOf(record, 0, []);
-  const revisions = [...thresholdFamilies(record), ...switchOffFamilies(record), ...factorFamilies(record)];
+  const thresholds = thresholdFamilies(record);
+  yield 0.05;
+  const switches = switchOffFamilies(record);
+  yield 0.07;
+  const revisions = [...thresholds, ...switches, ...factorFamilies(record)];
   yield 0.1;
-  const additions = regionFamilies(record);
-  yield 0.2;
-  const found: Found[] = [];
-  for (const [at, families] of [revisions, additions].entries()) {
-    const steps = testFamilies(record, families, seed + 1 + at);
-    for (let step = steps.next(); ; step = steps.next()) {
-      if (step.done === true) {
-        found.push(...step.value);
-        break;
-      }
-      yield 0.2 + 0.4 * (at + step.value);
-    }
-  }
-  const proposals = orderProposals(record, found).map((item) => makeProposal(record, item));
+  const additions = yield* scaled(regionFamilies(record), 0.1, 0.2);
+  const revised = yield* scaled(testFamilies(record, revisions, seed + 1), 0.3, 0.2);
+  const added = yield* scaled(testFamilies(record, additions, seed + 2), 0.5, 0.5);
+  const proposals = orderProposals([...revised, ...added]).map((item) => makeProposal(record, item));
   return resultOf(record, countCandidates(revisions) + countCandidates(additions), proposals);
 }
 
+const familiesPerStep = 50;
+
 function* testFamilies(record: SearchRecord, families: readonly Family[], seed: number): Steps<Found[]> {
-  const promising = families.flatMap((family) => {
+  const promising: Omit<Found, "pValue">[] = [];
+  for (const [at, family] of families.entries()) {
     const best = bestCandidate(family);
-    if (best === null || best.statistic < leastHeldOutStatistic) return [];
-    const heldOut = crossValidate(record, family);
-    return heldOut.statistic < leastHeldOutStatistic ? [] : [{ family, ...best, heldOut }];
-  });
+    const heldOut = best === null || best.statistic < leastHeldOutStatistic ? null : crossValidate(record, family);
+    if (best !== null && heldOut !== null && heldOut.statistic >= leastHeldOutStatistic) promising.push({ family, ...best, heldOut });
+    if (at % familiesPerStep === 0) yield (0.2 * at) / families.length;
+  }
   if (promising.length === 0) return [];
-  const pValues = yield* correctForSearch(families, promising, { cases: record.rows.length, seed, level: proposalLevel / 2 });
+  const pValues = yield* scaled(correctForSearch(families, promising, { cases: record.rows.length, seed, level: proposalLevel / 2 }), 0.2, 0.8);
   return promising.flatMap((item, index): Found[] => {
     const pValue = Math.min(1, 2 * (pValues[index] ?? 1));
     return pValue <= proposalLevel ? [{ ...item, pValue }] : [];

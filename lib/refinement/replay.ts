@@ -6,7 +6,7 @@ import { chooseFirsts, forceOf, noChoice, type RuleForce } from "./first-choices
 import { pairedTest } from "./paired-test";
 import type { PreparedReplay } from "./prepare-replay";
 import type { ChangedCase, ReplayResult } from "./replay-result";
-import { runAtOnce, runInSteps, type StepOptions, type Steps } from "./run-in-steps";
+import { runAtOnce, runInSteps, scaled, type StepOptions, type Steps } from "./run-in-steps";
 
 /** A rule set's first choices on a record set, row by row, with what made them. */
 export type Replay = {
@@ -61,14 +61,6 @@ function* compareSteps(prepared: PreparedReplay, live: RuleSet, draft: RuleSet):
     yield 0.6 + (0.4 * rows[1]) / prepared.cases.length;
   }
   return resultOf(pairs, changes);
-}
-
-function* scaled<Result>(steps: Steps<Result>, start: number, share: number): Steps<Result> {
-  for (;;) {
-    const { done, value } = steps.next();
-    if (done === true) return value;
-    yield start + share * value;
-  }
 }
 
 function* rowSteps({ cases }: PreparedReplay): Generator<[number, number], void, void> {

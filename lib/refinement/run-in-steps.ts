@@ -16,7 +16,16 @@ export function runAtOnce<Result>(steps: Steps<Result>): Result {
   }
 }
 
-/** The same with a turn of the event loop after each step, so that others are served, and with a way to stop. */
+/** Steps as a part of longer work: shares run from `start` over `share` of the whole. */
+export function* scaled<Result>(steps: Steps<Result>, start: number, share: number): Steps<Result> {
+  for (;;) {
+    const { done, value } = steps.next();
+    if (done === true) return value;
+    yield start + share * value;
+  }
+}
+
+/** All steps with a turn of the event loop after each step, so that others are served, and with a way to stop. */
 export async function runInSteps<Result>(steps: Steps<Result>, { onProgress, signal }: StepOptions = {}): Promise<Result> {
   let shown = 0;
   for (;;) {

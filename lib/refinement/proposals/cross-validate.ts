@@ -1,13 +1,14 @@
 import type { Candidate, Family } from "./family";
 import { folds, type SearchRecord } from "./search-record";
-import { gainOf } from "./walk";
 
 /** The candidate of a family that saves most over the whole record, with its sum of gains and its statistic; null when none saves. */
 export function bestCandidate(family: Family): { candidate: Candidate; gain: number; statistic: number } | null {
   let found: { candidate: Candidate; gain: number; statistic: number } | null = null;
   family.walks.forEach((walk, index) => {
+    let gain = 0;
+    let position = 0;
     for (const { count, tag } of walk.ends) {
-      const gain = gainOf(walk, count);
+      for (; position < count; position += 1) gain += walk.gains[position] ?? 0;
       if (gain > 0 && (found === null || gain > found.gain)) found = { candidate: { walk: index, count, tag }, gain, statistic: gain * (walk.scale[count - 1] ?? 0) };
     }
   });

@@ -5,11 +5,12 @@ import { factDefinitions } from "@/rules/facts";
 import type { Comparison, Effect, Rule } from "@/rules/rule-schema";
 import { forceOf } from "../first-choices";
 import type { ThresholdInterval } from "../proposal-schema";
+import type { Steps } from "../run-in-steps";
 import type { Family } from "./family";
 import { thresholdBetween } from "./nice-value";
 import { firstsWith, lossOf, type SearchRecord } from "./search-record";
 import { thresholdInterval } from "./threshold-interval";
-import { walkOf, type Step } from "./walk";
+import { leastChangedCases, walkOf, type Step } from "./walk";
 
 /** Factors that a new rule is tried with. */
 const factorsTried = [1.5, 2.5, 5] as const;
@@ -18,24 +19,32 @@ const factorsTried = [1.5, 2.5, 5] as const;
 const factsTried = factDefinitions.filter(({ group, name }) => group === "answers" || group === "sizes" || name === "directToFastestRatio");
 
 type Preference = Extract<Effect, { kind: "favour" | "disfavour" }>;
-type Change = { index: number; after: number; gain: number };
+type Change = { after: number; gain: number };
 
 /**
  * New rules with one comparison and one favour or disfavour. A family is one side of one number, or one word, with one effect. Families
  * that change the same cases in the same order to the same end (facts that go together, factors that act alike) are kept once.
  */
-export function regionFamilies(record: SearchRecord): Family[] {
+export function* regionFamilies(record: SearchRecord): Steps<Family[]> {
   const families = new Map<string, Family>();
-  for (const effect of effectsTried(record)) {
+  const facts = factsTried.map((fact) => orderFact(record, fact));
+  const effects = effectsTried(record);
+  for (const [done, effect] of effects.entries()) {
     const changes = changesBy(record, effect);
-    if (changes.length === 0) continue;
-    for (const family of factsTried.flatMap((fact) => familiesOf(record, fact, effect, changes))) {
-      const steps = family.walks[0];
-      const same = `${steps?.cases.join()}|${steps?.afters.join()}|${steps?.ends.map(({ count }) => count).join()}`;
-      if (!families.has(same)) families.set(same, family);
+    if (changes.size < leastChangedCases) continue;
+    for (const [fact, ordered] of facts.entries()) {
+      for (const family of familiesOf(record, ordered, effect, changes)) {
+        const same = changesKey(family);
+        if (!families.has(same)) families.set(same, family);
+      }
+      yield (done + fact / facts.length) / effects.length;
     }
   }
   return [...families.values()];
+}
+
+function changesKey({ walks }: Family): string {
+  return walks.map(({ cases, afters, ends }) => `${cases.join()}|${afters.join()}|${ends.map(({ count }) => count).join()}`).join(";");
 }
 
 /** Favours of what was compared, disfavours of what comes first somewhere. */
@@ -47,41 +56,60 @@ function effectsTried(record: SearchRecord): Preference[] {
   });
 }
 
-function changesBy(record: SearchRecord, effect: Preference): Change[] {
-  const everywhere = new Uint8Array(record.prepared.cases.length).fill(2);
-  const afters = firstsWith(record, null, forceOf({ then: [effect] }), everywhere);
-  return record.rows.flatMap((_, index) => {
-    const [before, after] = [record.firsts[index] ?? -1, afters[index] ?? -1];
-    return before === after ? [] : [{ index, after, gain: lossOf(record, index, before) - lossOf(record, index, after) }];
+/** A fact's values over the contested cases that have it, numbers in rising order, and over the whole record. */
+type OrderedFact = { fact: FactDefinition; values: readonly { index: number; value: FactValue }[]; recorded: readonly number[] };
+
+function orderFact(record: SearchRecord, fact: FactDefinition): OrderedFact {
+  const all = record.prepared.valuesOf(fact.name);
+  const values = record.rows.flatMap((row, index) => {
+    const value = all[row];
+    return value === undefined ? [] : [{ index, value }];
   });
+  if (fact.type === "number") values.sort((a, b) => Number(a.value) - Number(b.value));
+  return { fact, values, recorded: all.filter((value) => typeof value === "number").sort((a, b) => a - b) };
 }
 
-function familiesOf(record: SearchRecord, fact: FactDefinition, effect: Preference, changes: readonly Change[]): Family[] {
-  const values = record.prepared.valuesOf(fact.name);
-  const placed = changes.flatMap((change) => {
-    const value = values[record.rows[change.index] ?? -1];
-    return value === undefined ? [] : [{ ...change, value }];
+/** What an effect would change if it acted everywhere, by contested case. */
+function changesBy(record: SearchRecord, effect: Preference): ReadonlyMap<number, Change> {
+  const everywhere = new Uint8Array(record.prepared.cases.length).fill(2);
+  const afters = firstsWith(record, null, forceOf({ then: [effect] }), everywhere);
+  const changes = new Map<number, Change>();
+  record.rows.forEach((_, index) => {
+    const [before, after] = [record.firsts[index] ?? -1, afters[index] ?? -1];
+    if (before !== after) changes.set(index, { after, gain: lossOf(record, index, before) - lossOf(record, index, after) });
   });
-  if (fact.type === "number") return [true, false].flatMap((upper) => numberFamily(record, fact, effect, placed, upper) ?? []);
+  return changes;
+}
+
+function familiesOf(record: SearchRecord, ordered: OrderedFact, effect: Preference, changes: ReadonlyMap<number, Change>): Family[] {
+  const { fact } = ordered;
+  const placed = ordered.values.flatMap(({ index, value }): Placed[] => {
+    const change = changes.get(index);
+    return change === undefined ? [] : [{ index, value, ...change }];
+  });
+  if (placed.length < leastChangedCases) return [];
+  if (fact.type === "number") {
+    const numbers = placed.flatMap(({ value, ...change }) => (typeof value === "number" ? [{ ...change, value }] : []));
+    return [true, false].flatMap((upper) => numberFamily(record, ordered, effect, numbers, upper) ?? []);
+  }
   const words: FactValue[] = fact.type === "boolean" ? [true, false] : [...(fact.allowed ?? [])];
   return words.flatMap((word) => wordFamily(record, fact, effect, placed, word) ?? []);
 }
 
-type Placed = Change & { value: FactValue };
+type Placed = Change & { index: number; value: FactValue };
+type PlacedNumber = Change & { index: number; value: number };
 
-/** The upper (or lower) side of a number, grown from the record's end. */
-function numberFamily(record: SearchRecord, fact: FactDefinition, effect: Preference, placed: readonly Placed[], upper: boolean): Family | null {
-  const sign = upper ? -1 : 1;
-  const numbers = placed.flatMap(({ value, ...change }) => (typeof value === "number" ? [{ ...change, value }] : []));
-  const walked = numbers.sort((a, b) => sign * (a.value - b.value));
-  const recorded = record.prepared.valuesOf(fact.name).filter((value) => typeof value === "number").toSorted((a, b) => a - b);
-  const nextOf = (last: number) => {
-    const beyond = (value: number) => (upper ? value < last : value > last);
-    return walked.find(({ value }) => beyond(value))?.value ?? (upper ? recorded.findLast(beyond) : recorded.find(beyond));
-  };
+/** The upper (or lower) side of a number, grown from the record's end; `rising` are the changed cases by value. */
+function numberFamily(record: SearchRecord, { fact, recorded }: OrderedFact, effect: Preference, rising: readonly PlacedNumber[], upper: boolean): Family | null {
+  const walked = upper ? rising.toReversed() : rising;
+  const last = walked.at(-1)?.value ?? 0;
+  const pastLast = upper ? recorded.findLast((value) => value < last) : recorded.find((value) => value > last);
+  const bounds = new Map<number, { below: number; above: number }>();
   const steps = walked.map(({ index, after, value }, position): Step => {
-    const ends = walked[position + 1]?.value !== value && nextOf(value) !== undefined;
-    return { index, after, tag: ends ? value : null };
+    const next = position + 1 < walked.length ? walked[position + 1]?.value : pastLast;
+    if (next === undefined || next === value) return { index, after, tag: null };
+    bounds.set(value, upper ? { below: next, above: value } : { below: value, above: next });
+    return { index, after, tag: value };
   });
   const walk = walkOf(record, steps);
   if (walk === null) return null;
@@ -90,12 +118,11 @@ function numberFamily(record: SearchRecord, fact: FactDefinition, effect: Prefer
     kind: "new-rule",
     walks: [walk],
     changeOf: ({ tag }) => {
-      const next = nextOf(tag) ?? tag;
-      const bounds = upper ? { below: next, above: tag } : { below: tag, above: next };
+      const between = bounds.get(tag) ?? { below: tag, above: tag };
       const operator = upper ? "greaterThanInclusive" : "lessThan";
-      const value = thresholdBetween(bounds.below, bounds.above, operator, fact.whole);
-      const ascending = numbers.toSorted((a, b) => a.value - b.value).map(({ value: at, gain }) => ({ value: at, gainAbove: Number.isNaN(gain) ? null : upper ? gain : -gain }));
-      const interval = thresholdInterval(ascending, bounds, [recorded[0] ?? value, recorded.at(-1) ?? value]);
+      const value = thresholdBetween(between.below, between.above, operator, fact.whole);
+      const gains = rising.map(({ value: at, gain }) => ({ value: at, gainAbove: Number.isNaN(gain) ? null : upper ? gain : -gain }));
+      const interval = thresholdInterval(gains, between, [recorded[0] ?? value, recorded.at(-1) ?? value]);
       return changeOf(record, { fact: fact.name, operator, value }, effect, value, interval);
     },
   };

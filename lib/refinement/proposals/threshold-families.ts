@@ -34,7 +34,7 @@ function familyOf(record: SearchRecord, at: number, threshold: Threshold): Famil
   const rising = stepsOf(hanging.filter(({ above }) => above));
   const falling = stepsOf(hanging.filter(({ above }) => !above).reverse());
   const recorded = values.filter((value) => typeof value === "number").toSorted((a, b) => a - b);
-  const bounds = [rising, falling].map((steps, side) => boundsOf(steps, hanging, recorded, side === 0));
+  const bounds = [rising, falling].map((steps, side) => boundsOf(steps, recorded, side === 0));
   const walks: Walk[] = [];
   const boundsOfWalk: Bounds[] = [];
   [rising, falling].forEach((steps, side) => {
@@ -83,17 +83,16 @@ function stepsOf(hanging: readonly HangingCase[]): Step[] {
 
 type Bounds = ReadonlyMap<number, { below: number; above: number }>;
 
-/** The recorded values between which the threshold then lies: the next case that hangs on it, else the next recorded one; absent past the record's end. */
-function boundsOf(steps: readonly Step[], hanging: readonly HangingCase[], recorded: readonly number[], rising: boolean): Bounds {
+/** The recorded values between which the threshold then lies: up to the next case that hangs on it, else the next recorded one; absent past the record's end. */
+function boundsOf(steps: readonly Step[], recorded: readonly number[], rising: boolean): Bounds {
+  const ends = steps.flatMap(({ tag }) => (tag === null ? [] : [tag]));
+  const last = ends.at(-1);
+  const pastRecord = last === undefined ? undefined : rising ? recorded.find((value) => value > last) : recorded.findLast((value) => value < last);
   const bounds = new Map<number, { below: number; above: number }>();
-  for (const { tag } of steps) {
-    if (tag === null) continue;
-    const beyond = (value: number) => (rising ? value > tag : value < tag);
-    const next = rising
-      ? (hanging.find(({ value }) => beyond(value))?.value ?? recorded.find(beyond))
-      : (hanging.findLast(({ value }) => beyond(value))?.value ?? recorded.findLast(beyond));
-    if (next !== undefined) bounds.set(tag, rising ? { below: tag, above: next } : { below: next, above: tag });
-  }
+  ends.forEach((end, position) => {
+    const next = ends[position + 1] ?? pastRecord;
+    if (next !== undefined) bounds.set(end, rising ? { below: end, above: next } : { below: next, above: end });
+  });
   return bounds;
 }
 

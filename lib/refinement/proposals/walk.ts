@@ -55,13 +55,6 @@ export function walkOf(record: SearchRecord, steps: readonly Step[]): Walk | nul
   return eligible.length === 0 ? null : { ...walk, ends: eligible };
 }
 
-/** Sum of gains of the candidate that ends after `count` positions. */
-export function gainOf({ gains }: Walk, count: number): number {
-  let sum = 0;
-  for (let position = 0; position < count; position += 1) sum += gains[position] ?? 0;
-  return sum;
-}
-
 /** Largest sum of gains over its root of squares, over all candidates of a walk, with the cases' signs flipped as given; 0 at least. */
 export function largestStatistic({ cases, gains, scale }: Walk, signs: Int8Array): number {
   let sum = 0;

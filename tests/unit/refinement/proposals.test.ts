@@ -148,7 +148,8 @@ describe("carrying out a proposal", () => {
 
   it("replaces the rule in its place, whatever the order of its keys, and leaves the given set alone", () => {
     if (former === undefined) throw new Error("no rule");
-    const reordered = JSON.parse(JSON.stringify({ source: former.source, ...former }));
+    const { source, ...rest } = former;
+    const reordered = { source, ...rest };
     const applied = applyProposal(rules, { ruleId: former.id, formerRule: reordered, rule: { ...former, enabled: false } });
     expect(applied.map(({ enabled }) => enabled)).toEqual([false, true]);
     expect(rules[0]?.enabled).toBe(true);
