@@ -11,7 +11,8 @@ export function formOfLog(parsed: ParsedLog, before: RunFormValues): RunFormValu
     strategy: parsed.strategy ?? before.strategy,
     outcome: parsed.outcome ?? before.outcome,
     reason: parsed.outcome === "broken" ? (parsed.reasonText ?? parsed.reason ?? "").slice(0, 400) : "",
-    iterations: text(parsed.iterations),
+    // Cycles around an inner solve are not the strategy's iterations; the sum of the inner ones is not printed.
+    iterations: parsed.preconditioner === "ksp" ? "" : text(parsed.iterations),
     setupSeconds: text(parsed.setupSeconds),
     solveSeconds: text(parsed.solveSeconds),
     peakMemoryGiB: text(parsed.peakMemoryGiB),

@@ -31,7 +31,8 @@ export function reportFromLog(parsed: ParsedLog, given: LogQuery): ReportFromLog
 
 function loggedValues(parsed: ParsedLog) {
   const { iterations, setupSeconds, solveSeconds, peakMemoryGiB, trueRelativeResidual, monitoredRelativeResidual, monitoredNorm } = parsed;
-  return { iterations, setupSeconds, solveSeconds, peakMemoryGiB, trueRelativeResidual, monitoredRelativeResidual, monitoredNorm };
+  // Cycles around an inner solve are not the iterations that a strategy is predicted to take; the sum of the inner ones is not printed.
+  return { iterations: cyclesOnly(parsed) ? undefined : iterations, setupSeconds, solveSeconds, peakMemoryGiB, trueRelativeResidual, monitoredRelativeResidual, monitoredNorm };
 }
 
 function loggedReason({ reason, reasonText }: ParsedLog): string | undefined {
@@ -39,11 +40,23 @@ function loggedReason({ reason, reasonText }: ParsedLog): string | undefined {
   return text === null ? undefined : text.slice(0, 400).trim() || undefined;
 }
 
+/** Whether the counted iterations are cycles of an outer method around a whole inner solve. */
+function cyclesOnly({ preconditioner }: Pick<ParsedLog, "preconditioner">): boolean {
+  return preconditioner === "ksp";
+}
+
 function doubtsOf(parsed: ParsedLog, given: LogQuery): LogProblem[] {
+  const doubts: LogProblem[] = [];
   const { strategy } = given;
-  if (strategy === undefined || parsed.strategy === null || parsed.strategy === strategy) return [];
-  const text = `The log shows the strategy ${parsed.strategy}; the call says ${strategy}, and so it is recorded.`;
-  return [{ line: parsed.lines["strategy"] ?? null, severity: "warning", text }];
+  if (strategy !== undefined && parsed.strategy !== null && parsed.strategy !== strategy) {
+    const text = `The log shows the strategy ${parsed.strategy}; the call says ${strategy}, and so it is recorded.`;
+    doubts.push({ line: parsed.lines["strategy"] ?? null, severity: "warning", text });
+  }
+  if (cyclesOnly(parsed) && parsed.iterations !== null && given.iterations === undefined) {
+    const text = "The iterations are cycles around an inner solve, not those of the strategy; they are not recorded.";
+    doubts.push({ line: parsed.lines["iterations"] ?? null, severity: "note", text });
+  }
+  return doubts;
 }
 
 /** A logged value outside what a run can hold is left out and said; a given one is refused. */

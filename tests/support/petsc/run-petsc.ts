@@ -61,7 +61,7 @@ export function runPetscAll(jobs: readonly PetscJob[]): PetscResult[] {
 }
 
 /** One process needs no MPI daemon and no network. */
-const singleProcess = { OMPI_MCA_ess_singleton_isolated: "1", OMPI_MCA_pml: "ob1", OMPI_MCA_btl: "self" };
+export const singleProcess = { OMPI_MCA_ess_singleton_isolated: "1", OMPI_MCA_pml: "ob1", OMPI_MCA_btl: "self" };
 
 /** Standard output of a program that uses PETSc. */
 export function spawnPetsc(command: string, args: readonly string[], extra: Record<string, string> = singleProcess): string {
@@ -90,7 +90,7 @@ export function runPetscParallel(job: PetscJob, processes: number): PetscResult 
 }
 
 /** Debian's module finds PETSc by an alternative that its runtime package alone does not set: name the real-number build. */
-function petscEnvironment(): NodeJS.ProcessEnv {
+export function petscEnvironment(): NodeJS.ProcessEnv {
   return {
     ...process.env,
     PETSC_DIR: petscDirectory(),
