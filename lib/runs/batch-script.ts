@@ -5,8 +5,8 @@ export type BatchScriptInput = {
   caseNumber: number;
   strategy: StrategyId;
   hardware: Hardware;
-  /** Upper end of the predicted total time. */
-  totalSecondsHigh: number;
+  /** Directives for memory and time, from `resourceRequests`. */
+  requests: readonly string[];
   /** Options for PETSc, null where the strategy is a recipe only. */
   options: { filename: string; text: string } | null;
   /** Address of this installation. */
@@ -14,50 +14,37 @@ export type BatchScriptInput = {
 };
 
 /**
- * A shell script for a Slurm cluster: asks for the case's hardware, runs the user's program with the options file and reports the run.
- * The key comes from the environment, never from the script. Predicted times only shorten the request where the case has no limit.
+ * A shell script for a Slurm cluster: asks for the case's hardware, runs the user's program with the options file and sends the log, or,
+ * where the program was killed before its solver could say how it ended, the outcome. The key comes from the environment, never from
+ * the script.
  */
 export function batchScript(input: BatchScriptInput): string {
   return [...header(input), ...settings(input), ...optionsLines(input), ...runLines(input), ...reportLines(input), ""].join("\n");
 }
 
-/** Leaves a twentieth of a node to its operating system; common practice, no source. */
-const memoryShare = 0.95;
-const leastMinutes = 10;
-/** The request is this many times the predicted upper end, for start-up and assembly. */
-const timeAllowance = 3;
-
-function header({ caseNumber, strategy, hardware, totalSecondsHigh }: BatchScriptInput): string[] {
-  const seconds = hardware.timeLimitSeconds ?? timeAllowance * totalSecondsHigh;
-  const minutes = Math.min(14 * 1440, Math.max(leastMinutes, Math.ceil(seconds / 60)));
+function header({ caseNumber, strategy, hardware, requests }: BatchScriptInput): string[] {
   return [
     "#!/bin/bash",
     `#SBATCH --job-name=saddlemark-${caseNumber}-${strategy}`,
     `#SBATCH --nodes=${hardware.nodes}`,
     `#SBATCH --ntasks=${hardware.cores}`,
-    `#SBATCH --mem=${Math.max(1, Math.floor(memoryShare * hardware.memoryPerNodeGiB * 1024))}M`,
-    `#SBATCH --time=${clockTime(minutes)}`,
+    `#SBATCH --ntasks-per-node=${Math.ceil(hardware.cores / hardware.nodes)}`,
+    ...requests,
     `#SBATCH --output=saddlemark-${caseNumber}-${strategy}-%j.log`,
     "",
-    `# Case ${caseNumber}, strategy ${strategy}. The estimate is no guarantee: check memory and time against your site's rules.`,
+    `# Case ${caseNumber}, strategy ${strategy}. The estimate is no guarantee: a job past its memory is killed, and can take a shared node down.`,
     "set -u",
+    "# One process a core, so no threads below it.",
+    "export OMP_NUM_THREADS=1 OPENBLAS_NUM_THREADS=1 MKL_NUM_THREADS=1",
     "",
   ];
-}
-
-function clockTime(minutes: number): string {
-  const pad = (value: number) => String(value).padStart(2, "0");
-  const days = Math.floor(minutes / 1440);
-  const rest = minutes % 1440;
-  const clock = `${pad(Math.floor(rest / 60))}:${pad(rest % 60)}:00`;
-  return days > 0 ? `${days}-${clock}` : clock;
 }
 
 function settings({ caseNumber, strategy, baseUrl }: BatchScriptInput): string[] {
   return [
     "# Your program with its own arguments, and a key that may write (team page). Without a key nothing is reported.",
     'program="${PROGRAM:?set PROGRAM to your solver and its arguments}"',
-    `address="\${SADDLEMARK_URL:-${baseUrl}}/api/v1/cases/${caseNumber}/runs"`,
+    `address="\${SADDLEMARK_URL:-${baseUrl}}/api/v1/cases/${caseNumber}"`,
     `log="saddlemark-${caseNumber}-${strategy}-\${SLURM_JOB_ID:-local}.out"`,
     "",
   ];
@@ -76,7 +63,7 @@ function optionsLines({ options }: BatchScriptInput): string[] {
 function runLines({ hardware }: BatchScriptInput): string[] {
   return [
     "# Not quoted on purpose: the program's arguments and the options are words of their own.",
-    `mpiexec -n ${hardware.cores} $program $options -ksp_converged_reason 2>&1 | tee "$log"`,
+    `mpiexec -n ${hardware.cores} $program $options -ksp_converged_reason -ksp_view -log_view -memory_view -options_left 2>&1 | tee "$log"`,
     'status="${PIPESTATUS[0]}"',
     "",
     "outcome=broken",
@@ -92,13 +79,18 @@ function runLines({ hardware }: BatchScriptInput): string[] {
 }
 
 function reportLines({ strategy, hardware }: BatchScriptInput): string[] {
+  const send = '    curl --silent --show-error --fail --retry 3 -X POST -H "Authorization: Bearer $SADDLEMARK_KEY" -H "Idempotency-Key: batch-${SLURM_JOB_ID:-$(date +%s)}" \\';
   return [
     'if [ -n "${SADDLEMARK_KEY:-}" ]; then',
-    `  printf '{"strategy":"${strategy}","outcome":"%s","iterations":%s,"cores":${hardware.cores},"followedAdvice":true,"note":"reported by the batch script"}' "$outcome" "\${iterations:-null}" |`,
-    '    curl --silent --show-error --fail --retry 3 -X POST "$address" -H "Authorization: Bearer $SADDLEMARK_KEY" -H "Content-Type: application/json" \\',
-    '      -H "Idempotency-Key: batch-${SLURM_JOB_ID:-$(date +%s)}" --data-binary @- && echo',
+    '  if grep -q "solve converged due to\\|solve did not converge due to" "$log"; then',
+    send,
+    `      -H "Content-Type: text/plain" --data-binary @"$log" "$address/logs?strategy=${strategy}" && echo`,
+    "  else",
+    `    printf '{"strategy":"${strategy}","outcome":"%s","iterations":%s,"cores":${hardware.cores},"followedAdvice":true,"note":"reported by the batch script"}' "$outcome" "\${iterations:-null}" |`,
+    send,
+    '      -H "Content-Type: application/json" --data-binary @- "$address/runs" && echo',
+    "  fi",
     "fi",
-    'echo "Add set-up and solve times to the run report: they decide whether the advice was the best."',
     'exit "$status"',
   ];
 }

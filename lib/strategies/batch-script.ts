@@ -20,8 +20,6 @@ export function batchScript(context: BatchContext): string {
   const { hardware } = context.answers;
   const id = context.strategy ?? "case";
   const tasksPerNode = Math.ceil(hardware.cores / hardware.nodes);
-  const memory = memoryRequest(context, tasksPerNode);
-  const time = timeRequest(context);
   return [
     "#!/bin/bash",
     "# Saddlemark: Slurm batch script for one solve",
@@ -30,10 +28,7 @@ export function batchScript(context: BatchContext): string {
     `#SBATCH --ntasks=${hardware.cores}`,
     `#SBATCH --ntasks-per-node=${tasksPerNode}`,
     "#SBATCH --cpus-per-task=1",
-    `# ${memory.reason}`,
-    `#SBATCH --mem=${memory.mib}M`,
-    `# ${time.reason}`,
-    `#SBATCH --time=${clock(time.seconds)}`,
+    ...resourceRequests(context),
     "#SBATCH --output=%x-%j.log",
     "",
     "# The estimate is no guarantee: a job past its memory is killed, and without --mem it can take a shared node down.",
@@ -45,6 +40,14 @@ export function batchScript(context: BatchContext): string {
     'srun "$PROGRAM" -options_file "$OPTIONS" -options_left -log_view -memory_view',
     "",
   ].join("\n");
+}
+
+/** Slurm's directives for memory and time, each under a comment that says how it was reached. */
+export function resourceRequests(context: BatchContext): string[] {
+  const { hardware } = context.answers;
+  const memory = memoryRequest(context, Math.ceil(hardware.cores / hardware.nodes));
+  const time = timeRequest(context);
+  return [`# ${memory.reason}`, `#SBATCH --mem=${memory.mib}M`, `# ${time.reason}`, `#SBATCH --time=${clock(time.seconds)}`];
 }
 
 /** MiB per node and how it was reached. */

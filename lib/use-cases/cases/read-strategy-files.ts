@@ -9,6 +9,7 @@ import { batchScript } from "@/lib/runs/batch-script";
 import { AppError } from "@/lib/shared/app-error";
 import { strategyIdSchema, type StrategyId } from "@/lib/shared/strategy-ids";
 import { strategies } from "@/lib/strategies";
+import { resourceRequests } from "@/lib/strategies/batch-script";
 import type { OptionsFile } from "@/lib/strategies/strategy";
 import { caseNotFound, caseRefOf } from "@/lib/use-cases/shared/case-ref";
 
@@ -50,20 +51,19 @@ export const readStrategyFiles = defineUseCase({
 
 type Rendered = Awaited<ReturnType<typeof renderStrategy>>;
 
-function batchScriptOf(strategy: StrategyId, { number, answers, entry, file }: Rendered): TextFile {
+function batchScriptOf(strategy: StrategyId, { number, context, entry, file }: Rendered): TextFile {
   const text = batchScript({
     caseNumber: number,
     strategy,
-    hardware: answers.hardware,
-    totalSecondsHigh: entry.estimate.totalSeconds.high,
+    hardware: context.answers.hardware,
+    requests: resourceRequests({ ...context, strategy, totalSecondsHigh: entry.estimate.totalSeconds.high }),
     options: file.kind === "petsc" ? { filename: file.filename, text: file.text } : null,
     baseUrl: readAuthSettings().baseUrl,
   });
   return { filename: `case-${number}-${strategy}.sh`, text };
 }
 
-/** The files of one strategy under the latest advice on a case. Throws AppError "not-found". */
-export async function renderStrategy(db: TeamDatabase, scope: Scope, caseRef: string, strategy: StrategyId) {
+async function renderStrategy(db: TeamDatabase, scope: Scope, caseRef: string, strategy: StrategyId) {
   const found = await findCase(db, scope, caseRefOf(caseRef));
   if (found === null) throw caseNotFound();
   const [latest] = await listCaseAdvice(db, scope, found.id, 1);

@@ -8,7 +8,7 @@ import { caseLimits } from "@/lib/runs/case-limits";
 
 const { hardware } = toAnswers(questionnaireSchema.parse(defaultQuestionnaire), null);
 const input: BatchScriptInput = {
-  caseNumber: 12, strategy: "bddc", hardware, totalSecondsHigh: 30, options: { filename: "case 12;rm.opts", text: "-ksp_type cg\nEND_OF_OPTIONS\nrm -rf /\n" }, baseUrl: "http://127.0.0.1:3000",
+  caseNumber: 12, strategy: "bddc", hardware, requests: ["#SBATCH --mem=1000M", "#SBATCH --time=00:10:00"], options: { filename: "case 12;rm.opts", text: "-ksp_type cg\nEND_OF_OPTIONS\nrm -rf /\n" }, baseUrl: "http://127.0.0.1:3000",
 };
 
 describe("batchScript", () => {
@@ -26,23 +26,22 @@ describe("batchScript", () => {
     expect(script).toContain("cat > case-12-rm.opts <<'END_OF_OPTIONS'\n-ksp_type cg\nrm -rf /\nEND_OF_OPTIONS");
   });
 
-  // Slurm's sbatch manual, --time: "days-hours:minutes:seconds".
-  it.each([
-    [null, 30, "00:10:00"],
-    [null, 3600, "03:00:00"],
-    [90 * 60, 30, "01:30:00"],
-    [50 * 3600, 30, "2-02:00:00"],
-  ])("with the limit %s s and a prediction of %i s asks for %s", (timeLimitSeconds, totalSecondsHigh, time) => {
-    expect(batchScript({ ...input, totalSecondsHigh, hardware: { ...hardware, timeLimitSeconds } })).toContain(`#SBATCH --time=${time}\n`);
+  it("asks for what it is told, before any command", () => {
+    const lines = batchScript(input).split("\n");
+    const firstCommand = lines.findIndex((line) => line !== "" && !line.startsWith("#"));
+    expect(lines.slice(0, firstCommand)).toEqual(expect.arrayContaining(["#SBATCH --mem=1000M", "#SBATCH --time=00:10:00", "#SBATCH --ntasks=32"]));
   });
 
-  it("holds no key and reports the outcome that the program printed", () => {
-    const log = "Linear solve converged due to CONVERGED_RTOL iterations 31";
-    const script = batchScript({ ...input, options: null }).replace(/^ {4}curl [\s\S]*?&& echo$/m, "    cat");
-    const folder = spawnSync("mktemp", ["-d"], { encoding: "utf8" }).stdout.trim();
-    const ran = spawnSync("bash", ["-c", `mpiexec() { echo "${log}"; }\n${script}`], { cwd: folder, encoding: "utf8", env: { ...process.env, PROGRAM: "solver", SADDLEMARK_KEY: "sdm_x" } });
+  it.each([
+    ["sends the log of a solver that said how it ended", "Linear solve converged due to CONVERGED_RTOL iterations 31", 'logs?strategy=bddc'],
+    ["sends the outcome where the program was killed before that", "Killed: out of memory", '"outcome":"out-of-memory"'],
+  ])("holds no key and %s", (_name, printed, sent) => {
+    const script = batchScript({ ...input, options: null });
     expect(script).not.toContain("sdm_");
-    expect(ran.stdout).toContain('{"strategy":"bddc","outcome":"converged","iterations":31,"cores":32,"followedAdvice":true');
+    const folder = spawnSync("mktemp", ["-d"], { encoding: "utf8" }).stdout.trim();
+    const fakes = `mpiexec() { echo "${printed}"; }\ncurl() { echo "curl $*"; [[ "$*" == *@-* ]] && cat; return 0; }`;
+    const ran = spawnSync("bash", ["-c", `${fakes}\n${script}`], { cwd: folder, encoding: "utf8", env: { ...process.env, PROGRAM: "solver", SADDLEMARK_KEY: "sdm_x" } });
+    expect(ran.stdout).toContain(sent);
   });
 });
 
