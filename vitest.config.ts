@@ -25,7 +25,8 @@ export default defineConfig({
           include: ["tests/database/**/*.test.ts"],
           environment: "node",
           globalSetup: ["tests/support/database-setup.ts"],
-          fileParallelism: false,
+          // Every file has a database of its own.
+          maxWorkers: 2,
           testTimeout: 60_000,
           hookTimeout: 120_000,
         },
