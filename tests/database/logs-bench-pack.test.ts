@@ -73,7 +73,7 @@ async function unpackedPack(answers: typeof uniform.answers | typeof contrasted.
   return { caseId: made.id, candidates, folder: join(place, packFolder({ caseNumber: made.number })) };
 }
 
-function drive(folder: string, args: readonly string[], env: NodeJS.ProcessEnv): Promise<{ status: number | null; output: string }> {
+function drive(folder: string, args: readonly string[], env: Record<string, string>): Promise<{ status: number | null; output: string }> {
   return new Promise((resolve) => {
     const child = spawn("sh", ["run.sh", ...args], { cwd: folder, env: { ...petscEnvironment(), SADDLEMARK_URL: address, ...env } });
     let output = "";

@@ -39,8 +39,8 @@ export const makeBenchPack = defineUseCase({
 });
 
 async function render(db: TeamDatabase, scope: Scope, caseRef: string, strategy: StrategyId) {
-  const { number, title, givenAt, answers, entry, file, recipe } = await renderStrategy(db, scope, caseRef, strategy);
+  const { number, title, givenAt, context, entry, file, recipe } = await renderStrategy(db, scope, caseRef, strategy);
   const { totalSeconds, memoryGiB } = entry.estimate;
   const candidate: PackCandidate = { strategy, name: definitions[strategy].name, file, recipe, totalSecondsHigh: totalSeconds.high, memoryGiBHigh: memoryGiB.high };
-  return { number, title, givenAt, answers, candidate };
+  return { number, title, givenAt, answers: context.answers, candidate };
 }

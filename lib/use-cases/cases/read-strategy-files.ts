@@ -63,7 +63,8 @@ function batchScriptOf(strategy: StrategyId, { number, context, entry, file }: R
   return { filename: `case-${number}-${strategy}.sh`, text };
 }
 
-async function renderStrategy(db: TeamDatabase, scope: Scope, caseRef: string, strategy: StrategyId) {
+/** The files of one strategy under the latest advice on a case, and what they were written from. Throws AppError "not-found". */
+export async function renderStrategy(db: TeamDatabase, scope: Scope, caseRef: string, strategy: StrategyId) {
   const found = await findCase(db, scope, caseRefOf(caseRef));
   if (found === null) throw caseNotFound();
   const [latest] = await listCaseAdvice(db, scope, found.id, 1);
@@ -74,5 +75,5 @@ async function renderStrategy(db: TeamDatabase, scope: Scope, caseRef: string, s
   const context = { answers, sizes: latest.content.sizes, parameters, iterationsHigh: estimate.iterations.high, memoryGiBHigh: estimate.memoryGiB.high };
   const definition = strategies[strategy];
   const file: OptionsFile = definition.options(context);
-  return { number, title: found.title, givenAt: latest.createdAt, answers, entry, file, recipe: definition.recipe(context) };
+  return { number, title: found.title, givenAt: latest.createdAt, context, entry, file, recipe: definition.recipe(context) };
 }

@@ -7,6 +7,8 @@ import { batchSnippets } from "@/components/logs/batch-snippets";
 import { correctionsOf, formOfLog } from "@/components/logs/log-form-values";
 import { LogDrop } from "@/components/logs/log-drop";
 import { LogReading } from "@/components/logs/log-reading";
+import { emptyDraft, emptyRow, tryMapping } from "@/components/logs/mapping-draft";
+import { MappingEditor } from "@/components/logs/mapping-editor";
 import { relativeHistory, understoodValues } from "@/components/logs/understood-values";
 import { logQuery } from "@/lib/api/contract/logs";
 import { createLogReader } from "@/lib/logs/log-reader";
@@ -72,6 +74,36 @@ describe("the form that a log fills", () => {
     const report = runReportSchema.parse(fromRunForm({ ...formOfLog(minres, emptyRunForm), setupSeconds: "0.5", solveSeconds: "", note: "looked over" }));
     const query = logQuery.parse(Object.fromEntries(correctionsOf(report)));
     expect(query).toMatchObject({ strategy: "schur-diag-direct", iterations: 39, setupSeconds: 0.5, solveSeconds: null, note: "looked over" });
+  });
+});
+
+describe("a log format in the making", () => {
+  const draft = { ...emptyDraft, name: "House solver", converged: "all good", rows: [{ ...emptyRow("iterations"), pattern: "took (\\d+) steps" }] };
+
+  it("is tried on the log as it is typed", () => {
+    const tried = tryMapping(draft, "took 12 steps\ntook 17 steps\nall good");
+    expect("parsed" in tried ? tried.parsed : tried).toMatchObject({ iterations: 17, outcome: "converged", lines: { iterations: 2 } });
+  });
+
+  it("reads a column with its unit", () => {
+    const row = { ...emptyRow("solveSeconds"), by: "column" as const, index: "3", contains: "solve", scale: "0.001" };
+    const tried = tryMapping({ ...draft, rows: [row] }, "solve took 2500 ms\n");
+    expect("parsed" in tried ? tried.parsed.solveSeconds : tried).toBe(2.5);
+  });
+
+  it.each([
+    ["no name", { ...draft, name: "" }, "name"],
+    ["an empty pattern", { ...draft, rows: [emptyRow("iterations")] }, "quantities.iterations.pattern"],
+    ["a pattern that could run away", { ...draft, rows: [{ ...emptyRow("iterations"), pattern: "(a+)\\1" }] }, "quantities.iterations.pattern"],
+    ["a scale that is no number", { ...draft, rows: [{ ...emptyRow("iterations"), pattern: "(\\d+)", scale: "many" }] }, "quantities.iterations.scale"],
+  ])("with %s says where", (_name, faulty, path) => {
+    const tried = tryMapping(faulty, "");
+    expect("errors" in tried ? tried.errors.map((error) => error.path) : []).toContain(path);
+  });
+
+  it("shows what it understands of the log", () => {
+    const html = renderToStaticMarkup(<MappingEditor sample="took 17 steps" saving={false} refusal={null} onSave={() => undefined} onCancel={() => undefined} />);
+    expect(html).toContain("Save the format and read the log");
   });
 });
 

@@ -6,7 +6,7 @@ export async function readLines(log: Blob, wanted: ReadonlySet<number>): Promise
   const found: Record<number, string> = {};
   const last = Math.max(0, ...wanted);
   const decoder = new TextDecoder("latin1");
-  const reader = (await isGzip(log)) ? log.stream().pipeThrough(new DecompressionStream("gzip")).getReader() : log.stream().getReader();
+  const reader = await openLog(log);
   let rest = "";
   let number = 1;
   let bytes = 0;
@@ -24,6 +24,26 @@ export async function readLines(log: Blob, wanted: ReadonlySet<number>): Promise
     await reader.cancel().catch(() => undefined);
   }
   return found;
+}
+
+/** Enough of a log to try a format on without stalling the page. */
+const sampleBytes = 512 * 1024;
+
+/** The first half MiB of a log as text. */
+export async function readBeginning(log: Blob): Promise<string> {
+  const decoder = new TextDecoder();
+  const reader = await openLog(log);
+  let text = "";
+  try {
+    for (let next = await reader.read(); !next.done && text.length < sampleBytes; next = await reader.read()) text += decoder.decode(next.value, { stream: true });
+  } finally {
+    await reader.cancel().catch(() => undefined);
+  }
+  return text.slice(0, sampleBytes);
+}
+
+async function openLog(log: Blob): Promise<ReadableStreamDefaultReader<Uint8Array>> {
+  return (await isGzip(log)) ? log.stream().pipeThrough(new DecompressionStream("gzip")).getReader() : log.stream().getReader();
 }
 
 async function isGzip(log: Blob): Promise<boolean> {

@@ -38,6 +38,7 @@ export function ReportRun({ reference, detail, correcting, onDone }: ReportRunPr
         const search = correctionsOf(report);
         search.set("record", "true");
         search.set("fileName", log.name.slice(0, 200));
+        if (log.mapping !== null) search.set("mapping", log.mapping);
         return (await callApi<LogRead>(`/cases/${reference}/logs?${search.toString()}`, { method: "POST", file: log.file, idempotencyKey })).runId;
       }
       // A refused body leaves the key unused, so a mended one can be sent under it.
@@ -56,7 +57,7 @@ export function ReportRun({ reference, detail, correcting, onDone }: ReportRunPr
         <DialogDescription>Only the strategy and the outcome must be given. Failed runs are as welcome as good ones.</DialogDescription>
         {correcting === null && <LogIntake reference={reference} log={log} onLog={setLog} />}
         <RunForm
-          key={log === null ? "by hand" : log.read.parsed.linesRead}
+          key={log === null ? "by hand" : `${log.name} ${log.mapping ?? ""}`}
           initial={initial}
           correcting={correcting !== null}
           submitting={save.isPending}
