@@ -4,7 +4,7 @@ import { indefiniteFactor } from "@/lib/strategies/petsc/factor-settings";
 import { kernelNotes } from "@/lib/strategies/petsc/schur-split";
 import { shortNumber, writeOptionsFile, type OptionLine } from "@/lib/strategies/petsc/write-options-file";
 
-/** MUMPS LDLᵀ; one factorised solve, or where round-off may show, the factor inside a true-residual test. */
+/** MUMPS LDLᵀ; one factorised solve, or where round-off may show, iterative refinement with a true-residual test. */
 export function options(context: OptionsContext): OptionsFile {
   return writeOptionsFile({
     id: "direct-ldlt",
@@ -41,10 +41,13 @@ function krylov({ answers }: OptionsContext): OptionLine[] {
     ];
   }
   return [
-    { name: "ksp_type", value: "fgmres", why: "Contrast, units or tolerance can show round-off: the factor preconditions a test on the true residual. One iteration is normal, a second costs one substitution." },
+    {
+      name: "ksp_type",
+      value: "richardson",
+      why: "Contrast, units or tolerance can show round-off: iterative refinement with a test on the true residual. One iteration is normal, a second costs one substitution.",
+    },
     { name: "ksp_norm_type", value: "unpreconditioned", why: "The residual of the system itself." },
     { name: "ksp_rtol", value: shortNumber(answers.tolerance), why: "The tolerance asked for." },
-    { name: "ksp_gmres_restart", value: 10, why: "No more vectors than iterations." },
     { name: "ksp_max_it", value: 10, why: "More iterations than this mean a bad factor: raise ICNTL(14), check the null space." },
     { name: "ksp_converged_reason", why: "Print why and after how many iterations it stopped." },
   ];
