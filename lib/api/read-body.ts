@@ -1,4 +1,5 @@
 import { AppError, type FieldError } from "@/lib/shared/app-error";
+import { encodingOf, unpackBody } from "./unpack-body";
 
 export const jsonLimitBytes = 2 ** 20;
 export const importLimitBytes = 32 * 2 ** 20;
@@ -26,10 +27,11 @@ export async function* readChunks(request: Request, limitBytes: number): AsyncGe
   }
 }
 
-/** The body as JSON: at most 1 MiB of valid UTF-8. Throws AppError "too-large", "malformed", or "invalid" for text that can't be stored. */
+/** The body as JSON, gzipped or not: at most 1 MiB of valid UTF-8. Throws AppError "too-large", "malformed", or "invalid" for text that can't be stored. */
 export async function readJson(request: Request, limitBytes = jsonLimitBytes): Promise<unknown> {
   const chunks: Uint8Array[] = [];
-  for await (const chunk of readChunks(request, limitBytes)) chunks.push(chunk);
+  const announced = encodingOf(request.headers.get("content-encoding"));
+  for await (const chunk of unpackBody(readChunks(request, limitBytes), { announced, limitBytes })) chunks.push(chunk);
   const value = parseJson(decodeUtf8(chunks));
   const fields = unstorableText(value);
   if (fields.length > 0) throw new AppError("invalid", "Some text can't be stored.", { fields });

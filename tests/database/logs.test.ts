@@ -216,6 +216,22 @@ describe("several runs at once", () => {
   });
 });
 
+describe("a run as gzipped JSON", () => {
+  const report = JSON.stringify({ strategy: "bddc", outcome: "converged", note: "packed" });
+  const post = (rawBody: Buffer) => world.call("POST", path.replace("/logs", "/runs"), { rawBody, headers: { "content-type": "application/json", "content-encoding": "gzip" } });
+
+  it("is recorded like any other", async () => {
+    const answer = await post(gzipSync(report));
+    expect(answer.status).toBe(201);
+    expect((await runOf(operations.recordRun.response.schema.parse(answer.json()).id)).note).toBe("packed");
+  });
+
+  it("is refused when it is cut, or larger than 1 MiB unpacked", async () => {
+    expect((await post(gzipSync(report).subarray(0, 20))).status).toBe(400);
+    expect((await post(gzipSync(" ".repeat(2 ** 20) + report))).status).toBe(413);
+  });
+});
+
 describe("the diagnosis of a run reported by hand", () => {
   it("compares it with the case's other runs", async () => {
     const made = await world.expect(201, createdCase, "POST", "/api/v1/cases", { body: { questionnaire: defaultQuestionnaire } });

@@ -8,6 +8,8 @@ import { findingSchema } from "./findings";
 import { runRecordedSchema } from "./runs";
 
 export const logMediaTypes = ["text/plain", "application/octet-stream"] as const;
+/** Of a log, also of what comes out of a gzipped one. */
+export const logLimitBytes = 256 * 2 ** 20;
 export const mostRunsAtOnce = 500;
 
 const flag = z.enum(["true", "false"], "Say true or false.").transform((text) => text === "true").pipe(z.boolean());

@@ -3,7 +3,8 @@ import { findCase } from "@/db/queries/cases";
 import { findRunLog, insertRunLog, listRunsForDiagnosis } from "@/db/queries/logs";
 import { withTeam, type TeamDatabase } from "@/db/scope";
 import { caseRefSchema } from "@/lib/api/contract/common";
-import { logReadSchema, type LogQuery, type LogRead } from "@/lib/api/contract/logs";
+import { logLimitBytes, logReadSchema, type LogQuery, type LogRead } from "@/lib/api/contract/logs";
+import { bodyEncodings, unpackBody } from "@/lib/api/unpack-body";
 import { defineUseCase, type Scope } from "@/lib/auth/guard";
 import type { ParsedLog } from "@/lib/logs/parsed-log";
 import { caseLimits } from "@/lib/runs/case-limits";
@@ -16,7 +17,6 @@ import { withIdempotency, type Repeatable } from "@/lib/use-cases/shared/with-id
 import { findMapping } from "./find-mapping";
 import { readLogStream, type ReadStream } from "./read-log-stream";
 import { reportFromLog } from "./report-from-log";
-import { unpackLog } from "./unpack-log";
 
 /** What is remembered under an Idempotency-Key: the rest of the answer follows from the log that the repeat sends again. */
 const rememberedSchema = z.object({ runId: z.string().nullable() });
@@ -30,7 +30,7 @@ export const readLog = defineUseCase({
     caseRef: caseRefSchema,
     query: z.custom<LogQuery>((value) => typeof value === "object" && value !== null),
     chunks: z.custom<AsyncIterable<Uint8Array>>((value) => typeof value === "object" && value !== null && Symbol.asyncIterator in value),
-    encoding: z.enum(["identity", "gzip"]),
+    encoding: z.enum(bodyEncodings),
     idempotencyKey: z.string().nullable().default(null),
   }),
   run: async ({ scope }, { caseRef, query, chunks, encoding, idempotencyKey }): Promise<Repeatable<LogRead>> => {
@@ -39,7 +39,7 @@ export const readLog = defineUseCase({
       if ((await findCase(db, scope, caseRefOf(caseRef))) === null) throw caseNotFound();
       return query.mapping === undefined ? null : findMapping(db, scope, query.mapping);
     });
-    const read = await readLogStream(unpackLog(chunks, { announced: encoding }), mapping);
+    const read = await readLogStream(unpackBody(chunks, { announced: encoding, limitBytes: logLimitBytes }), mapping);
     const reading = { caseRef, query, read };
     return withTeam(scope, async (db) => {
       const body = { sha256: read.sha256, query, mapping };

@@ -1,8 +1,9 @@
 import { operations } from "@/lib/api/contract";
+import { logLimitBytes } from "@/lib/api/contract/logs";
 import { readChunks } from "@/lib/api/read-body";
 import { apiMethods, apiRoute } from "@/lib/api/route";
+import { encodingOf } from "@/lib/api/unpack-body";
 import { readLog } from "@/lib/use-cases/logs/read-log";
-import { encodingOf, logLimitBytes } from "@/lib/use-cases/logs/unpack-log";
 
 export const { GET, POST, PUT, PATCH, DELETE } = apiMethods({
   POST: apiRoute(operations.readLog, readLog, {

@@ -2,31 +2,33 @@ import { Readable, pipeline } from "node:stream";
 import { createGunzip } from "node:zlib";
 import { AppError } from "@/lib/shared/app-error";
 
-export const logLimitBytes = 256 * 2 ** 20;
+export const bodyEncodings = ["identity", "gzip"] as const;
+export type BodyEncoding = (typeof bodyEncodings)[number];
 
 type Chunks = AsyncIterable<Uint8Array>;
 
 /**
- * A log as text bytes, whether it came gzipped or not: gzip is known by its first two bytes, so a compressed file that was dropped is read
- * as well as a body that says Content-Encoding. Holds one chunk at a time. Throws AppError "too-large" as soon as more than `limitBytes`
+ * A body as it was before it was packed: gzip is known by its first two bytes, so a compressed file that was dropped is read as well as a
+ * body that says Content-Encoding. Holds one chunk at a time. Throws AppError "too-large" as soon as more than `limitBytes`
  * came out, "malformed" for gzip data that is damaged or cut.
  */
-export async function* unpackLog(chunks: Chunks, { announced, limitBytes = logLimitBytes }: { announced: "gzip" | "identity"; limitBytes?: number }): AsyncGenerator<Uint8Array> {
+export async function* unpackBody(chunks: Chunks, { announced, limitBytes }: { announced: BodyEncoding; limitBytes: number }): AsyncGenerator<Uint8Array> {
   const { zipped, all } = await sniff(chunks);
   if (announced === "gzip" && zipped === false) throw new AppError("malformed", "The body is announced as gzip and is not.");
   let unpacked = 0;
   for await (const chunk of zipped === true ? gunzip(all) : all) {
     unpacked += chunk.byteLength;
-    if (unpacked > limitBytes) throw new AppError("too-large", `The log is larger than ${limitBytes / 2 ** 20} MiB unpacked. Send the part from the start of the solve, or its solver view, reason and summary.`);
+    if (unpacked > limitBytes) throw new AppError("too-large", `The body is larger than ${limitBytes / 2 ** 20} MiB unpacked.`);
     yield chunk;
   }
 }
 
-export function encodingOf(header: string | null): "gzip" | "identity" {
+/** What Content-Encoding announces. Throws AppError "unsupported-media" for anything but gzip. */
+export function encodingOf(header: string | null): BodyEncoding {
   const name = (header ?? "identity").trim().toLowerCase();
   if (name === "identity" || name === "") return "identity";
   if (name === "gzip" || name === "x-gzip") return "gzip";
-  throw new AppError("unsupported-media", "Send the log as it is or with Content-Encoding: gzip.");
+  throw new AppError("unsupported-media", "Send the body as it is or with Content-Encoding: gzip.");
 }
 
 /** Looks at the first two bytes without losing them; null for a body of fewer. */
@@ -63,6 +65,6 @@ async function* gunzip(chunks: Chunks): AsyncGenerator<Uint8Array> {
     if (error instanceof AppError) throw error;
     const damaged = error instanceof Error && "code" in error && typeof error.code === "string" && error.code.startsWith("Z_");
     if (!damaged) throw error;
-    throw new AppError("malformed", "The gzip data is damaged or cut. Send the log anew, or without compression.");
+    throw new AppError("malformed", "The gzip data is damaged or cut. Send it anew, or without compression.");
   }
 }
