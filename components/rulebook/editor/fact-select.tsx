@@ -12,8 +12,6 @@ const groupNames: Record<FactGroup, string> = { answers: "Answers", sizes: "Size
 type FactGroupView = { label: string; facts: { name: string; label: string }[] };
 
 /** Facts as the choice lists them: by where they come from, those of a strategy under its name. */
-const groups: readonly FactGroupView[] = makeGroups();
-
 function makeGroups(): FactGroupView[] {
   const strategyOf = (name: string) => strategyIds.find((id) => name.startsWith(factPrefixes[id]) && /^[A-Z]/.test(name.slice(factPrefixes[id].length)));
   const found = new Map<string, FactGroupView>();
@@ -32,18 +30,21 @@ function factLabel({ label, unit }: FactDefinition, strategy: string | undefined
   return unit === "" ? short : `${short}, ${unit}`;
 }
 
+/** Made once: the choice is long, and the same elements are not compared again with each key that is typed. */
+const options = makeGroups().map((group) => (
+  <optgroup key={group.label} label={group.label}>
+    {group.facts.map(({ name, label }) => (
+      <option key={name} value={name}>{label}</option>
+    ))}
+  </optgroup>
+));
+
 /** What a condition asks about. A fact that is not known keeps its name, marked. */
 export function FactSelect({ fact, onChange, label }: { fact: string; onChange: (fact: string) => void; label: string }) {
   return (
     <Select aria-label={label} value={fact} title={findFact(fact)?.description} onChange={(event) => onChange(event.target.value)}>
       {findFact(fact) === undefined && <option value={fact}>{fact} (unknown)</option>}
-      {groups.map((group) => (
-        <optgroup key={group.label} label={group.label}>
-          {group.facts.map(({ name, label: text }) => (
-            <option key={name} value={name}>{text}</option>
-          ))}
-        </optgroup>
-      ))}
+      {options}
     </Select>
   );
 }
