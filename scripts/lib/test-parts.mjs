@@ -26,6 +26,7 @@ const chromium = "/usr/bin/chromium";
  * @param {TestRun} run
  */
 export async function runUnitPart(run) {
+  await ensureSolverPackages(run);
   const typesOk =
     (await runTool(run, ["node_modules/next/dist/bin/next", "typegen"])) &&
     (await runTool(run, ["node_modules/typescript/bin/tsc", "--noEmit"]));
@@ -38,6 +39,7 @@ export async function runUnitPart(run) {
  * @param {TestRun} run
  */
 export async function runDatabasePart(run) {
+  await ensureSolverPackages(run);
   const paths = prepareDataFolder(join(run.folder, "database"));
   const supervisor = createSupervisor(run.abort);
   try {
@@ -147,4 +149,18 @@ async function runTool({ signal, say }, args, env = {}) {
 function environmentForTools() {
   const outer = Object.entries(process.env).filter(([name]) => !/^(DATABASE_URL.*|TEST_DATABASE_.*|SMTP_URL|NODE_ENV|npm_.*|NODE_OPTIONS)$/.test(name));
   return { ...Object.fromEntries(outer), NEXT_TELEMETRY_DISABLED: "1" };
+}
+
+/** Debian's packages that reference tests run against: PETSc with its Python interface, MPI, and the shell checker. */
+const solverPackages = [
+  { name: "python3-petsc4py", file: "/usr/lib/python3/dist-packages/petsc4py" },
+  { name: "openmpi-bin", file: "/usr/bin/mpiexec" },
+  { name: "shellcheck", file: "/usr/bin/shellcheck" },
+];
+
+/** @param {TestRun} run */
+async function ensureSolverPackages({ folder, signal, say }) {
+  const names = solverPackages.filter(({ file }) => !existsSync(file)).map(({ name }) => name);
+  if (names.length === 0) return;
+  await installDebianPackages({ names, purpose: "The solver libraries of the reference tests", logFile: join(folder, "apt-solvers.log"), signal, say });
 }
