@@ -153,7 +153,7 @@ function environmentForTools() {
 
 /** Debian's packages that reference tests run against: PETSc with its Python interface, MPI, and the shell checker. */
 const solverPackages = [
-  { name: "python3-petsc4py", file: "/usr/lib/python3/dist-packages/petsc4py" },
+  { name: "python3-petsc4py", file: "/usr/share/doc/python3-petsc4py" },
   { name: "openmpi-bin", file: "/usr/bin/mpiexec" },
   { name: "shellcheck", file: "/usr/bin/shellcheck" },
 ];
