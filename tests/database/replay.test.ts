@@ -7,6 +7,7 @@ import { runReplay } from "@/lib/use-cases/refinement/run-replay";
 import { runSearch } from "@/lib/use-cases/refinement/run-search";
 import { defaultQuestionnaire } from "@/lib/questionnaire/default-questionnaire";
 import type { Rule } from "@/rules/rule-schema";
+import { plantedCases, plantedEdition, trueThreshold } from "../support/planted-record";
 import { createdCase, recordedRun, startApiWorld, type ApiWorld, type CallOptions } from "../support/api";
 
 let world: ApiWorld;
@@ -171,6 +172,34 @@ describe("a search for refinements", () => {
     const answer = await world.call("POST", `${base}/drafts`, { as: "curator", body: { from: "proposal", search: items[0]?.id, key: "nothing" } });
     expect(answer.status).toBe(422);
   });
+});
+
+describe("a search of a record with a threshold planted wrong", () => {
+  it("finds it, and one call makes the proposal a draft that changes that rule alone", async () => {
+    const as = "foreigner";
+    const draftSchema = operations.getDraft.response.schema;
+    const imported = await world.expect(201, draftSchema, "POST", `${base}/drafts`, { as, body: { from: "import", edition: plantedEdition } });
+    await world.expect(200, draftSchema, "POST", `${base}/drafts/${imported.id}/submit`, { as, body: { version: 1, note: "Planted." } });
+    await world.expect(201, operations.publishDraft.response.schema, "POST", `${base}/drafts/${imported.id}/publish`, { as, body: { version: 1, replacing: 1 } });
+    const ids: string[] = [];
+    for (const { questionnaire } of plantedCases) ids.push((await world.expect(201, createdCase, "POST", "/api/v1/cases", { as, body: { questionnaire } })).id);
+    for (const [index, { runs }] of plantedCases.entries()) {
+      for (const body of runs) await world.expect(201, recordedRun, "POST", `/api/v1/cases/${ids[index]}/runs`, { as, body });
+    }
+    const { id } = await world.expect(200, searchSchema, "POST", `${base}/proposals`, { as });
+    const { rows } = await world.owner.query<{ team: string }>("select team_id as team from proposal_search where id = $1", [id]);
+    await runSearch({ teamId: rows[0]?.team ?? "", searchId: id });
+    const { result } = await world.expect(200, searchSchema, "GET", `${base}/proposals/${id}`, { as });
+    const proposal = result?.proposals.find(({ ruleId, kind }) => ruleId === "blocks-when-large" && kind === "threshold");
+    if (proposal?.change.kind !== "threshold") throw new Error(`Not found: ${result?.text}`);
+    // To within one recorded case: the sizes stand 40^(1/47) = 1.08 apart.
+    expect(proposal.change.to / trueThreshold).toBeGreaterThan(1 / 1.09);
+    expect(proposal.change.to / trueThreshold).toBeLessThan(1.09);
+    const draft = await world.expect(201, draftSchema, "POST", `${base}/drafts`, { as, body: { from: "proposal", search: id, key: proposal.key } });
+    expect(draft.origin).toBe(`proposal:${proposal.key}`);
+    expect(draft.differences.map(({ ruleId }) => ruleId)).toEqual(["blocks-when-large"]);
+    expect(draft.problems.filter(({ severity }) => severity === "error")).toEqual([]);
+  }, 180_000);
 });
 
 describe("the record of a rule", () => {
