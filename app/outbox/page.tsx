@@ -19,7 +19,7 @@ export default async function OutboxPage() {
         {letters.length === 0 ? (
           <EmptyState title="No letters yet" text="Invite somebody or ask for a new password; the letter appears here within seconds." />
         ) : (
-          <ol className="grid gap-4">
+          <ol className="grid grid-cols-1 gap-4">
             {letters.map((letter) => (
               <li key={letter.id}>
                 <OutboxLetter letter={letter} />

@@ -17,7 +17,7 @@ type CaseFiltersProps = { filter: Filter; authors: readonly { id: string; name: 
 /** Search and filters of the case list; each change goes to the address. */
 export function CaseFilters({ filter, authors, onChange, onClear }: CaseFiltersProps) {
   return (
-    <form role="search" aria-label="Filter the cases" className="grid items-end gap-x-4 gap-y-3 sm:grid-cols-2 xl:grid-cols-4" onSubmit={(event) => event.preventDefault()}>
+    <form role="search" aria-label="Filter the cases" className="grid grid-cols-1 items-end gap-x-4 gap-y-3 sm:grid-cols-2 xl:grid-cols-4" onSubmit={(event) => event.preventDefault()}>
       <Search key={filter.q ?? ""} initial={filter.q ?? ""} onSearch={(q) => onChange({ q })} />
       <Choice label="Status" name="status" filter={filter} onChange={onChange} options={Object.entries(statusLooks).map(([value, { word }]) => ({ value, label: word }))} />
       <Choice label="Advised first" name="strategy" filter={filter} onChange={onChange} options={strategyIds.map((value) => ({ value, label: strategyNames[value] }))} />

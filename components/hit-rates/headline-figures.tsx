@@ -10,7 +10,7 @@ type HeadlineFiguresProps = { rates: Rates; /** Address of the cases with a resu
 export function HeadlineFigures({ rates, casesWith }: HeadlineFiguresProps) {
   const { worked, best, regret, gapClosed, leftOut } = rates;
   return (
-    <div className="grid gap-x-10 gap-y-6 sm:grid-cols-2">
+    <div className="grid grid-cols-1 gap-x-10 gap-y-6 sm:grid-cols-2">
       <WilsonBar label="Worked" rate={worked} action={<CaseLinks links={[["worked", worked.x], ["missed", worked.n - worked.x]]} casesWith={casesWith} />} />
       <WilsonBar label="Best" rate={best} action={<CaseLinks links={[["best", best.x], ["beaten", best.n - best.x]]} casesWith={casesWith} />} />
       <Figure name="Regret" value={formatRatio(regret.value)} note={regret.n === 0 ? "no contested case yet" : `geometric mean over ${regret.n} contested ${regret.n === 1 ? "case" : "cases"}`} href={casesWith("contested")} />

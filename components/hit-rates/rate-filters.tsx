@@ -21,7 +21,7 @@ const choices = [
 /** Filters of the hit rates; each change goes to the address. */
 export function RateFilters({ filter, onChange, onClear }: RateFiltersProps) {
   return (
-    <form aria-label="Filter the hit rates" data-screen-only className="grid items-end gap-x-4 gap-y-3 sm:grid-cols-2 xl:grid-cols-4" onSubmit={(event) => event.preventDefault()}>
+    <form aria-label="Filter the hit rates" data-screen-only className="grid grid-cols-1 items-end gap-x-4 gap-y-3 sm:grid-cols-2 xl:grid-cols-4" onSubmit={(event) => event.preventDefault()}>
       {choices.map((choice) => (
         <Field key={choice.name} label={choice.label}>
           <Select value={filter[choice.name] ?? ""} onChange={(event) => onChange({ [choice.name]: event.target.value })}>

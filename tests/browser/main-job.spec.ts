@@ -47,7 +47,7 @@ test("a questionnaire becomes advice, a run report moves the hit rate", async ({
   await page.goto("/hit-rates");
   await page.getByRole("link", { name: /\d+ worked/ }).first().click();
   await expect(page).toHaveURL(/\/cases\?.*result=worked/);
-  await expect(page.getByRole("link", { name: "Journey case" })).toBeVisible();
+  await expect(page.getByRole("link", { name: "Journey case" }).first()).toBeVisible();
 });
 
 test("a run is corrected with its former values kept, and withdrawn but not deleted", async ({ page }) => {
