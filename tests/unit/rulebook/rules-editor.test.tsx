@@ -1,7 +1,7 @@
 // @vitest-environment jsdom
 import { cleanup, fireEvent, render, screen } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
-import { useReducer } from "react";
+import { useEffect, useReducer } from "react";
 import { afterEach, describe, expect, it } from "vitest";
 import { reduceEditor, startEditor } from "@/components/rulebook/editor/editor-state";
 import { RulesEditor } from "@/components/rulebook/editor/rules-editor";
@@ -32,10 +32,11 @@ const rules: RuleSet = [
 ];
 
 let present: RuleSet = rules;
+const keep = (shown: RuleSet): void => void (present = shown);
 
 function Host({ readOnly = false }: { readOnly?: boolean }) {
   const [state, dispatch] = useReducer(reduceEditor, rules, startEditor);
-  present = state.rules;
+  useEffect(() => keep(state.rules), [state.rules]);
   return <RulesEditor state={state} dispatch={dispatch} catalogue={parameterCatalogue} readOnly={readOnly} onSound={() => undefined} tryPanel={() => null} />;
 }
 
