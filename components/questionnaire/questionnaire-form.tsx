@@ -57,19 +57,21 @@ export function QuestionnaireForm({ initial, machines, onChange, onSubmit, submi
     [machines],
   );
   const form = useForm<FormValues>({ defaultValues: initial, resolver, mode: "onChange", shouldFocusError: true });
-  const { watch, setError } = form;
+  const { subscribe, setError } = form;
   const notify = useRef(onChange);
 
   useEffect(() => {
     notify.current = onChange;
   });
   useEffect(() => {
-    const subscription = watch((values) => {
-      const whole = formValuesSchema.safeParse(values);
-      if (whole.success) notify.current(whole.data);
+    return subscribe({
+      formState: { values: true },
+      callback: ({ values }) => {
+        const whole = formValuesSchema.safeParse(values);
+        if (whole.success) notify.current(whole.data);
+      },
     });
-    return () => subscription.unsubscribe();
-  }, [watch]);
+  }, [subscribe]);
   useEffect(() => {
     for (const field of refusal?.fields ?? []) {
       const name = fieldFor(field.path.replace(/^questionnaire\./, ""));

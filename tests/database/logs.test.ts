@@ -218,7 +218,7 @@ describe("several runs at once", () => {
 
 describe("a run as gzipped JSON", () => {
   const report = JSON.stringify({ strategy: "bddc", outcome: "converged", note: "packed" });
-  const post = (rawBody: Buffer) => world.call("POST", path.replace("/logs", "/runs"), { rawBody, headers: { "content-type": "application/json", "content-encoding": "gzip" } });
+  const post = (packed: Buffer) => world.call("POST", path.replace("/logs", "/runs"), { rawBody: new Uint8Array(packed), headers: { "content-type": "application/json", "content-encoding": "gzip" } });
 
   it("is recorded like any other", async () => {
     const answer = await post(gzipSync(report));
