@@ -2,7 +2,6 @@
 
 import { PenLine } from "lucide-react";
 import Link from "next/link";
-import { Fragment } from "react";
 import { StrategyLabel } from "@/components/charts/strategy-label";
 import { RateText } from "@/components/hit-rates/rate-text";
 import { Badge } from "@/components/ui/badge";
@@ -79,9 +78,7 @@ function CaseTable({ cases }: { cases: Proposal["evidence"]["cases"] }) {
         {cases.map(({ caseId, number, before, after, saves }) => (
           <li key={caseId} className="flex flex-wrap items-baseline gap-x-2">
             <Link href={`/cases/${number}`} className="prose-link">Case {number}</Link>
-            <Fragment>
-              <StrategyLabel strategy={before} /> <span aria-hidden>→</span><span className="sr-only">becomes</span> <StrategyLabel strategy={after} />
-            </Fragment>
+            <StrategyLabel strategy={before} /> <span aria-hidden>→</span><span className="sr-only">becomes</span> <StrategyLabel strategy={after} />
             <span className="figures text-faint">{saves > 1 ? `costs ${formatRatio(saves)} less` : `costs ${formatRatio(1 / saves)} as much`}</span>
           </li>
         ))}

@@ -19,14 +19,14 @@ export function ReplayReport({ result, editionNumber, titleOf }: ReplayReportPro
   return (
     <div className="grid gap-8">
       <section className="grid gap-3">
-        <h3 className="text-base font-semibold">On the same cases</h3>
+        <h2 className="text-lg font-semibold">On the same cases</h2>
         <RatesTable result={result} editionNumber={editionNumber} />
         <p className="max-w-measure text-sm text-faint">
           {result.cases} cases replayed. The live edition&apos;s first choice was run on {judged.before} of them, the draft&apos;s on {judged.after}, both on {judged.both}; only these {judged.both} can be compared. Advice already given is not touched.
         </p>
       </section>
       <section className="grid gap-2">
-        <h3 className="text-base font-semibold">Is it more than chance?</h3>
+        <h2 className="text-lg font-semibold">Is it more than chance?</h2>
         <dl className="grid max-w-measure gap-2 text-sm">
           <Meaning term="Worked">{result.tests.worked.text}</Meaning>
           <Meaning term="Best">{result.tests.best.text}</Meaning>
@@ -34,7 +34,7 @@ export function ReplayReport({ result, editionNumber, titleOf }: ReplayReportPro
         <p className="text-xs text-faint">Exact McNemar test on the cases where only one of the two came out right: p = {formatNumber(result.tests.worked.pValue, 2)} for worked, {formatNumber(result.tests.best.pValue, 2)} for best.</p>
       </section>
       <section className="grid gap-3">
-        <h3 className="text-base font-semibold">Cases whose first choice changes</h3>
+        <h2 className="text-lg font-semibold">Cases whose first choice changes</h2>
         <p className="text-sm">
           {changed.cases === 0 ? "None: the draft would have advised the same on every recorded case." : `${changed.cases} in all: ${changed.helped} helped, ${changed.hurt} hurt, ${changed.unknown} unknown because the runs can't tell.`}
         </p>

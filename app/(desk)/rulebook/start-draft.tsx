@@ -69,7 +69,7 @@ function StartRefusal({ message, error }: { message: string | null; error: unkno
     <Notice tone="bad" announce title="No draft was made">
       <p>{message ?? problemText(error)}</p>
       {message === null && fields.length > 0 && (
-        <ul className="grid max-h-48 gap-1 overflow-y-auto">
+        <ul tabIndex={0} aria-label="What does not fit" className="grid max-h-48 gap-1 overflow-y-auto">
           {fields.map(({ path, message: text }, index) => (
             <li key={index}><span className="font-mono text-xs">{path}</span> {text}</li>
           ))}

@@ -51,6 +51,7 @@ export function RulesEditor({ state, dispatch, catalogue, readOnly, onSound, try
           <p className="text-sm text-faint">There is no rule. Advice then follows the model and the record alone.</p>
         ) : (
           <div className="grid min-w-0 gap-3">
+            <h2 className="sr-only">{rule.title === "" ? rule.id : rule.title}</h2>
             {jsonBroken && <p role="status" className="text-sm font-medium text-bad">The form waits: what stands in the JSON box is not a rule.</p>}
             <RuleForm key={selected} rule={rule} path={String(selected)} catalogue={catalogue} disabled={readOnly || jsonBroken} onChange={change} />
           </div>

@@ -7,6 +7,7 @@ import { reduceEditor, startEditor } from "@/components/rulebook/editor/editor-s
 import { RulesEditor } from "@/components/rulebook/editor/rules-editor";
 import { parameterCatalogue } from "@/lib/advice/parameter-catalogue";
 import { ruleSetSchema, type Rule, type RuleSet } from "@/rules/rule-schema";
+import { violations } from "../../support/axe";
 
 afterEach(cleanup);
 
@@ -88,6 +89,11 @@ describe("the form and the JSON beside it", () => {
     fireEvent.change(jsonBox(), { target: { value: JSON.stringify({ ...rules[0], then: [{ kind: "favour", strategy: "direct-ldlt", factor: 1000 }] }) } });
     expect(screen.getByText(/^then\.0\.factor:/)).toBeDefined();
   });
+});
+
+it("breaks no rule of accessibility that can be told without a layout", async () => {
+  render(<Host />);
+  expect(await violations()).toEqual([]);
 });
 
 describe("problems", () => {

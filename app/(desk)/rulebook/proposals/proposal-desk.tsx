@@ -72,7 +72,8 @@ function SearchShown({ id, mayEdit }: { id: string; mayEdit: boolean }) {
       <WorkProgress work={search} label="Search" onCancel={mayEdit ? () => cancel.mutate() : null} />
       {draft.error !== null && <Notice tone="bad" announce title="No draft was made">{problemText(draft.error)}</Notice>}
       {result !== null && (
-        <section aria-label="Proposals found" className="grid">
+        <section aria-labelledby="found" className="grid gap-2">
+          <h2 id="found" className="text-lg font-semibold">{result.proposals.length === 0 ? "Nothing to propose" : `${result.proposals.length} that the record can defend`}</h2>
           <p className="max-w-measure text-sm">{result.text}</p>
           {result.enough && result.proposals.length === 0 && <p className="pt-3 text-sm text-faint">The live rules stand as far as the record can tell. More contested cases let smaller effects show.</p>}
           {result.proposals.map((proposal) => (
