@@ -1,9 +1,19 @@
 import { defaultQuestionnaire } from "@/lib/questionnaire/default-questionnaire";
 import { editionFile } from "@/rules/edition-json-schema";
+import { strategyIds } from "@/lib/shared/strategy-ids";
 import type { RuleSet } from "@/rules/rule-schema";
 
 /** An invented record in which one threshold of the rules is wrong: runs and rules for tests of the way from record to edition. */
 const plantedRules: RuleSet = [
+  {
+    id: "two-strategies-only",
+    title: "Only the two strategies that were run may compete",
+    enabled: true,
+    when: { fact: "degree", operator: "greaterThanInclusive", value: 1 },
+    then: strategyIds.filter((strategy) => strategy !== "direct-ldlt" && strategy !== "schur-diag-direct").map((strategy) => ({ kind: "exclude", strategy, reason: "Invented for a test." })),
+    rationale: "Invented for a test.",
+    source: { kind: "common-practice" },
+  },
   {
     id: "direct-otherwise",
     title: "Direct solver otherwise",
