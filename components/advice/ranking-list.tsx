@@ -20,14 +20,14 @@ type RankingListProps = {
   detail: (entry: RankingEntry) => ReactNode;
 };
 
-const columns = "lg:grid-cols-[1.5rem_minmax(11rem,15rem)_minmax(9rem,1fr)_4.5rem_9rem_6rem_1rem]";
+const columns = "lg:grid-cols-[1.5rem_minmax(10rem,13rem)_minmax(13rem,1fr)_3.5rem_7.5rem_4.5rem_1rem]";
 
 /** The ranked strategies as bars with their 80 % ranges on one log axis of relative time; each unfolds. */
 export function RankingList({ entries, memoryAvailableGiB, measured, detail }: RankingListProps) {
   const scale = makeLogScale([1, ...entries.flatMap((entry) => (entry.relativeRange ? [entry.relativeRange.low, entry.relativeRange.high] : [])), ...Object.values(measured)]);
   return (
     <div className="grid gap-1">
-      <div aria-hidden className={`hidden items-end gap-x-4 border-b border-contour pb-1 text-xs text-faint lg:grid ${columns}`}>
+      <div aria-hidden className={`hidden items-end gap-x-3 border-b border-contour pb-1 text-xs text-faint lg:grid ${columns}`}>
         <span />
         <span>Strategy</span>
         <TrackAxis scale={scale} format={tickText} />
@@ -41,7 +41,7 @@ export function RankingList({ entries, memoryAvailableGiB, measured, detail }: R
           <AccordionPrimitive.Item key={entry.strategy} value={entry.strategy} className="border-b border-hairline" data-strategy={entry.strategy}>
             <AccordionPrimitive.Header asChild>
               <h3 className="font-sans text-base font-normal">
-                <AccordionPrimitive.Trigger className={`group grid w-full grid-cols-[1.5rem_minmax(0,1fr)_auto_1rem] items-center gap-x-4 gap-y-1 py-2.5 text-left text-sm hover:bg-wash ${columns}`}>
+                <AccordionPrimitive.Trigger className={`group grid w-full grid-cols-[1.5rem_minmax(0,1fr)_auto_1rem] items-center gap-x-3 gap-y-1 py-2.5 text-left text-sm hover:bg-wash ${columns}`}>
                   <Row entry={entry} scale={scale} memoryAvailableGiB={memoryAvailableGiB} measured={measured[entry.strategy] ?? null} />
                 </AccordionPrimitive.Trigger>
               </h3>

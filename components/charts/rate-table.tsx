@@ -17,7 +17,7 @@ type RateTableProps = {
 /** A table shaded by rate. The figures stand in every cell; the shade only leads the eye, and never darker than text on it can bear. */
 export function RateTable({ caption, rowHeading, columns, rows, className }: RateTableProps) {
   return (
-    <div role="region" aria-label={caption} tabIndex={0} className={cn("overflow-x-auto print:overflow-visible", className)}>
+    <div role="region" aria-label={caption} tabIndex={0} className={cn("relative overflow-x-auto print:overflow-visible", className)}>
       <table className="w-full border-separate border-spacing-0.5 text-sm">
         <caption className="pb-2 text-left text-sm text-faint">{caption}</caption>
         <thead>

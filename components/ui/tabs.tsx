@@ -7,7 +7,7 @@ import { cn } from "./cn";
 export const Tabs = TabsPrimitive.Root;
 
 export function TabsList({ className, ...props }: ComponentProps<typeof TabsPrimitive.List>) {
-  return <TabsPrimitive.List className={cn("flex flex-wrap gap-x-1 border-b border-hairline", className)} {...props} />;
+  return <TabsPrimitive.List className={cn("flex flex-wrap gap-x-1 border-b border-hairline print:hidden", className)} {...props} />;
 }
 
 export function TabsTrigger({ className, ...props }: ComponentProps<typeof TabsPrimitive.Trigger>) {

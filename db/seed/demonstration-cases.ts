@@ -6,6 +6,7 @@ import { defaultQuestionnaire } from "@/lib/questionnaire/default-questionnaire"
 import type { Machine } from "@/lib/questionnaire/machine";
 import { questionnaireSchema, type Questionnaire } from "@/lib/questionnaire/questionnaire-schema";
 import { isConverged, totalSeconds } from "@/lib/runs/comparison";
+import { computeSizes } from "@/lib/sizes/compute-sizes";
 import { seededRandom } from "@/lib/shared/random";
 import { strategyIdSchema, type StrategyId } from "@/lib/shared/strategy-ids";
 import { firstEdition } from "@/rules/sets/first-edition";
@@ -54,9 +55,10 @@ async function demonstrationCase(plan: DemonstrationPlan, index: number, created
   const number = index + 1;
   const questionnaire = questionnaireOf(theme, machine, random);
   const answers = toAnswers(questionnaire, sheetOf(machine));
+  const title = `${questionnaire.title}, ${shortCount(computeSizes(answers).unknowns)} unknowns`;
   const evidence = readRecord(record, firstEdition, latestRecord(record.length, createdAt));
   const advice = await computeAdvice({ answers, ruleSet: firstEdition, editionNumber: 1, evidence, caseId: caseKey(number) });
-  return { number, title: questionnaire.title, questionnaire, answers, machineId: machine.id, advice, createdAt, runs: runsOf(plan, index, advice, answers, createdAt, random) };
+  return { number, title, questionnaire: { ...questionnaire, title }, answers, machineId: machine.id, advice, createdAt, runs: runsOf(plan, index, advice, answers, createdAt, random) };
 }
 
 function questionnaireOf(theme: Theme, machine: SavedMachine, random: () => number): Questionnaire {
@@ -65,7 +67,7 @@ function questionnaireOf(theme: Theme, machine: SavedMachine, random: () => numb
   return questionnaireSchema.parse({
     ...defaultQuestionnaire,
     ...theme.answers,
-    title: `${theme.title}, ${shortCount(unknowns)} unknowns`,
+    title: theme.title,
     size: { by: "unknowns", value: unknowns },
     tolerance: pick([1e-6, 1e-6, 1e-8], random),
     hardware: { machineId: machine.id, cores: theme.cores, timeLimitSeconds: random() < 0.3 ? 7200 : null },

@@ -35,11 +35,12 @@ function surprise(strategy: StrategyId, answers: Answers, random: () => number):
   const { ratio, pattern } = answers.contrast;
   const draw = random();
   if (strategy === "schur-diag-amg" && ratio >= 1e4 && draw < 0.5) return "stalled";
-  if (strategy === "schur-triangular" && ratio >= 1e4 && draw < 0.2) return "stalled";
+  if (strategy === "schur-triangular" && ratio >= 1e4 && draw < 0.3) return "stalled";
   if (strategy === "schur-diag-direct" && ratio >= 1e4 && draw < 0.35) return "own-test-only";
   if (strategy === "schwarz-two-level" && pattern === "random-field" && draw < 0.6) return "stalled";
   if (strategy === "regularized-amg" && answers.degree >= 3 && draw < 0.5) return "over-time";
-  return draw > 0.975 ? "broken" : null;
+  if (draw > 0.95) return "broken";
+  return draw > 0.9 ? "stalled" : null;
 }
 
 /** One invented run around an estimate: hidden truth, lognormal noise, and now and then a surprise. */

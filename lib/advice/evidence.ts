@@ -90,11 +90,17 @@ export function byStrategy<T>(make: (strategy: StrategyId) => T): Record<Strateg
   };
 }
 
+/** One mistaken or outlying run must not overturn the record: a residual speaks no louder than the correction may go. */
+function clampResidual(logResidual: number): number {
+  const limit = Math.log(evidenceLimit);
+  return Math.min(limit, Math.max(-limit, logResidual));
+}
+
 function fitStrategy(observations: readonly Observation[]): StrategyEvidence | null {
   if (observations.length === 0) return null;
   const posterior = fitBayesRegression(
     observations.map(({ features }) => designRow(features)),
-    observations.map(({ logResidual }) => logResidual),
+    observations.map(({ logResidual }) => clampResidual(logResidual)),
     prior,
   );
   const scaled = observations.map(({ features }) => scaledFeatures(features));

@@ -12,7 +12,7 @@ import {
 
 const wording = (what: string, kind: string) => ({
   error: (issue: { input?: unknown }) =>
-    issue.input === undefined || issue.input === null ? `${what}: give a number.` : `${what} must be a ${kind}, such as 400000 or 1e6.`,
+    issue.input === undefined || issue.input === null ? `${what}: give a number.` : `${what} must be a ${kind}.`,
 });
 const finite = (what: string) => z.number(wording(what, "number"));
 const whole = (what: string) => z.int(wording(what, "whole number"));

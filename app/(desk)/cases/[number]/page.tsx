@@ -9,7 +9,8 @@ import { CaseView } from "./case-view";
 type CasePageProps = { params: Promise<{ number: string }> };
 
 export async function generateMetadata({ params }: CasePageProps): Promise<Metadata> {
-  return { title: `Case ${(await params).number}` };
+  const { number } = await params;
+  return { title: /^[1-9]\d{0,8}$/.test(number) ? `Case ${number}` : "Case" };
 }
 
 /** One case: its advice, its runs. A case of another team is as absent as one that never was. */

@@ -20,13 +20,13 @@ export function ScalingSection({ reference, adviceId }: { reference: string; adv
     <section aria-labelledby="scaling" className="grid grid-cols-1 gap-3">
       <div className="flex flex-wrap items-end justify-between gap-3">
         <h2 id="scaling" className="text-lg font-semibold">Scaling</h2>
-        <SegmentedControl legend="Predicted time against" legendHidden value={over} onValueChange={setOver} options={[{ value: "cores", label: "Cores" }, { value: "unknowns", label: "Unknowns" }]} />
+        <SegmentedControl className="print:hidden" legend="Predicted time against" legendHidden value={over} onValueChange={setOver} options={[{ value: "cores", label: "Cores" }, { value: "unknowns", label: "Unknowns" }]} />
       </div>
       <p className="text-sm text-faint">By the model alone, before rules and evidence. {over === "cores" ? "More cores stop helping where a factorisation tree, a coarse grid or the network holds them up." : "The machine stays as it is; the mesh is refined or coarsened."}</p>
       {curves.error ? (
         <Notice tone="bad" title="The curves could not be fetched" action={<Button size="small" onClick={() => void curves.refetch()}>Try again</Button>}>{problemText(curves.error)}</Notice>
       ) : curves.data === undefined ? (
-        <Skeleton className="h-72" />
+        <Skeleton className="h-72 print:hidden" />
       ) : (
         <LogLogLines
           title={`Predicted time against ${curves.data.over}`}

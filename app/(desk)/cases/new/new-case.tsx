@@ -98,7 +98,7 @@ function Desk({ team, copiedFrom, copyMissing, initial, restored, machines: load
     >
       <PageTitle
         title={copiedFrom === null ? "New case" : `New case, from case ${copiedFrom}`}
-        below="About eight answers; the rest has defaults that fit. The margin follows as you answer."
+        below="Answer what you know; the rest has defaults that fit. The margin follows as you answer."
         actions={<Button variant="quiet" onClick={onStartOver}>Start over</Button>}
       />
       {restored && (
