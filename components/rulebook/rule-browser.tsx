@@ -24,9 +24,9 @@ export function RuleBrowser({ rules, fired, records }: RuleBrowserProps) {
   const shown = searchable.filter(({ words, strategies }) => words.includes(wanted) && (strategy === "" || strategies.has(strategy)));
   const filtered = wanted !== "" || strategy !== "";
   return (
-    <section aria-labelledby="rules" className="grid gap-2">
+    <section aria-labelledby="rules" className="grid grid-cols-1 gap-2">
       <h2 id="rules" className="text-lg font-semibold">Rules</h2>
-      <form role="search" aria-label="Filter the rules" className="grid items-end gap-3 sm:grid-cols-[minmax(0,1fr)_minmax(0,1fr)_auto]" onSubmit={(event) => event.preventDefault()} data-screen-only>
+      <form role="search" aria-label="Filter the rules" className="grid grid-cols-1 items-end gap-3 sm:grid-cols-[minmax(0,1fr)_minmax(0,1fr)_auto]" onSubmit={(event) => event.preventDefault()} data-screen-only>
         <Field label="Words">
           <Input type="search" value={text} maxLength={120} placeholder="Title, fact, effect, source" onChange={(event) => setText(event.target.value)} />
         </Field>

@@ -8,8 +8,8 @@ import type { Rule } from "@/rules/rule-schema";
 /** One rule in words: when, then, because, source. `record` says how often it fired. */
 export function RuleEntry({ rule, record }: { rule: Rule; record: ReactNode }) {
   return (
-    <article id={rule.id} data-keep-together className="grid gap-x-6 gap-y-2 border-b border-hairline py-4 lg:grid-cols-[minmax(0,1fr)_11rem]">
-      <div className="grid min-w-0 gap-2 text-sm">
+    <article id={rule.id} data-keep-together className="grid grid-cols-1 gap-x-6 gap-y-2 border-b border-hairline py-4 lg:grid-cols-[minmax(0,1fr)_11rem]">
+      <div className="grid min-w-0 grid-cols-1 gap-2 text-sm">
         <h3 className="flex flex-wrap items-baseline gap-x-3 text-base font-semibold">
           {rule.title}
           {!rule.enabled && <Badge tone="faint">switched off</Badge>}
@@ -28,7 +28,7 @@ export function RuleEntry({ rule, record }: { rule: Rule; record: ReactNode }) {
             <span className="text-faint">{sourceText(rule.source)}</span>
           </Line>
         </dl>
-        <p className="font-mono text-xs text-faint">{rule.id}</p>
+        <p className="font-mono text-xs break-all text-faint">{rule.id}</p>
       </div>
       <div className="text-sm lg:text-right">{record}</div>
     </article>
