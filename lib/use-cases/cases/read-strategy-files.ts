@@ -9,7 +9,7 @@ import { batchScript } from "@/lib/runs/batch-script";
 import { AppError } from "@/lib/shared/app-error";
 import { strategyIdSchema, type StrategyId } from "@/lib/shared/strategy-ids";
 import { strategies } from "@/lib/strategies";
-import { resourceRequests } from "@/lib/strategies/batch-script";
+import { resourceRequests } from "@/lib/strategies/resource-requests";
 import type { OptionsFile } from "@/lib/strategies/strategy";
 import { caseNotFound, caseRefOf } from "@/lib/use-cases/shared/case-ref";
 
@@ -56,7 +56,7 @@ function batchScriptOf(strategy: StrategyId, { number, context, entry, file }: R
     caseNumber: number,
     strategy,
     hardware: context.answers.hardware,
-    requests: resourceRequests({ ...context, strategy, totalSecondsHigh: entry.estimate.totalSeconds.high }),
+    requests: resourceRequests({ ...context, totalSecondsHigh: entry.estimate.totalSeconds.high }),
     options: file.kind === "petsc" ? { filename: file.filename, text: file.text } : null,
     baseUrl: readAuthSettings().baseUrl,
   });

@@ -26,6 +26,14 @@ describe("batchScript", () => {
     expect(script).toContain("cat > case-12-rm.opts <<'END_OF_OPTIONS'\n-ksp_type cg\nrm -rf /\nEND_OF_OPTIONS");
   });
 
+  it("takes the hardware and the strategy's file, one process a core", () => {
+    const script = batchScript({ ...input, hardware: { ...hardware, cores: 48, nodes: 2 } });
+    for (const line of ["#SBATCH --nodes=2", "#SBATCH --ntasks=48", "#SBATCH --ntasks-per-node=24", "#SBATCH --job-name=saddlemark-12-bddc"]) {
+      expect(script.split("\n")).toContain(line);
+    }
+    expect(script.startsWith("#!/bin/bash\n")).toBe(true);
+  });
+
   it("asks for what it is told, before any command", () => {
     const lines = batchScript(input).split("\n");
     const firstCommand = lines.findIndex((line) => line !== "" && !line.startsWith("#"));
